@@ -1,0 +1,4 @@
+//! Equation numbers, assembly, solution, diagnosis of mechanisms, residuals, critical load. Only user of nalgebra.
+mod solution;
+
+pub use solution::{CombinationSolution, CriticalLoad, LeftOut, MemberMovement, Solution};

@@ -1,0 +1,17 @@
+//! Drawings made from the solved data: scenes of lines, fills and text in millimetres on paper.
+mod scene;
+
+pub use scene::{Anchor, Dash, Item, Scene, Stroke, Style, TextItem};
+
+/// A drawing with its caption.
+#[derive(Debug, Clone, PartialEq)]
+pub struct Figure {
+    /// Its id, such as `structure` or `C1.M`; also the stem of its file.
+    pub id: String,
+    /// Its caption.
+    pub title: String,
+    /// What it shows, in words.
+    pub alternative: String,
+    /// The drawing.
+    pub scene: Scene,
+}

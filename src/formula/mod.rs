@@ -1,0 +1,18 @@
+//! Formulas as data: written once, then evaluated, differentiated, checked for dimensions, printed and read back.
+mod definition;
+mod dimensions;
+mod program;
+pub mod source;
+mod symbol;
+mod text;
+mod tree;
+mod worksheet;
+
+pub use definition::Definition;
+pub use dimensions::{DimensionFault, dimension_of};
+pub use program::Program;
+pub use source::Source;
+pub use symbol::Symbol;
+pub use text::{Operand, superscript_number, with_numbers, with_symbols};
+pub use tree::Tree;
+pub use worksheet::{Scope, Silent, StepNumber, Value, Worksheet};

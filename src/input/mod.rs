@@ -1,0 +1,1 @@
+//! (set out in the crate's picture)

@@ -1,0 +1,1 @@
+//! Reads a package back and confirms every line of it. Shares formula parsing and the units table with the rest, nothing else.

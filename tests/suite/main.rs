@@ -1,0 +1,1 @@
+//! The one test binary: published values, promises, diagnostics, packages, commands, tidiness of the house.
