@@ -111,7 +111,7 @@ mod tests {
 
     #[test]
     fn fixed_point_and_powers_of_ten() {
-        check(2.71828, -3, "2.718");
+        check(2.34567, -3, "2.346");
         check(-0.0004, -2, "0.00");
         check(-3.2145, -3, "−3.215");
         check(1.102e-4, -7, "110.2×10⁻⁶");
