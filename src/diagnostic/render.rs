@@ -170,7 +170,7 @@ mod tests {
     #[test]
     fn what_does_not_print_is_shown_and_long_lines_are_cut() {
         let text = format!("{}: \u{202e}bad{}", "k".repeat(300), "z".repeat(300));
-        let at = text.find('\u{202e}').unwrap();
+        let at = text.find('\u{202e}').expect("it is there");
         let fault = Diagnostic::error(Code::BadName, Address::root()).at(at..at + 6).message("m\u{1b}[0m").label("l");
         let kept = "k".repeat(69);
         let after = "z".repeat(25);

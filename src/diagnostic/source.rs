@@ -192,6 +192,6 @@ mod tests {
     #[test]
     fn columns_count_characters() {
         let source = Source::new("a: äöü x");
-        assert_eq!(source.line_column(source.text().find('x').unwrap()), (1, 8));
+        assert_eq!(source.line_column(source.text().find('x').expect("it is there")), (1, 8));
     }
 }

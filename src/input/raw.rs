@@ -77,6 +77,24 @@ impl Raw {
         }
     }
 
+    /// The value under a key, where this is a map that has it.
+    #[must_use]
+    pub fn field(&self, key: &str) -> Option<&Self> {
+        match &self.shape {
+            Shape::Map(fields) => fields.iter().find(|field| field.key == key).map(|field| &field.value),
+            _ => None,
+        }
+    }
+
+    /// The items of a list; none where it is no list.
+    #[must_use]
+    pub fn items(&self) -> &[Self] {
+        match &self.shape {
+            Shape::List(items) => items,
+            _ => &[],
+        }
+    }
+
     /// Whether there is no value.
     #[must_use]
     pub const fn is_null(&self) -> bool {
