@@ -88,3 +88,12 @@ pub const MINOR_INERTIA: Symbol = Symbol::new("I_z");
 pub const SHEAR_MOMENT: Symbol = Symbol::new("Q");
 /// Breadth at the level of the largest shear stress.
 pub const SHEAR_WIDTH: Symbol = Symbol::new("b_v");
+
+/// Every shape.
+pub static ALL: &[&dyn SectionKind] = &[];
+
+/// The shape with a name.
+#[must_use]
+pub fn find(name: &str) -> Option<&'static dyn SectionKind> {
+    ALL.iter().copied().find(|kind| kind.name() == name)
+}
