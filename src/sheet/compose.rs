@@ -5,8 +5,8 @@ use crate::formula::{Silent, Value, Worksheet};
 use crate::model::{Detail, Model};
 use crate::units::Measure;
 use crate::work::{
-    CombinationWork, MemberForces, NodeBalance, Prepared, largest_axial, node_movement, prepare, work_all, work_case_total,
-    work_member_checks, work_node, work_node_checks, work_one, work_stability_check, work_whole,
+    CombinationWork, MemberForces, NodeBalance, Prepared, largest_axial, node_movement, prepare, work_all,
+    work_case_total, work_member_checks, work_node, work_node_checks, work_one, work_stability_check, work_whole,
 };
 
 /// Results of the whole structure, worked silently.
@@ -35,7 +35,12 @@ fn governing(model: &Model, combinations: &[CombinationWork], member: usize) -> 
     let name = &model.members[member].name;
     let is_node = |kind: &str| kind.starts_with("deflection.");
     let score = |work: &CombinationWork| {
-        let ratio = work.checks.iter().filter(|c| c.subject == *name && !is_node(&c.kind)).filter_map(|c| c.ratio).fold(0.0, f64::max);
+        let ratio = work
+            .checks
+            .iter()
+            .filter(|c| c.subject == *name && !is_node(&c.kind))
+            .filter_map(|c| c.ratio)
+            .fold(0.0, f64::max);
         let forces = &work.forces[member];
         let stress = [work.extremes[member].tension, work.extremes[member].compression]
             .into_iter()
@@ -74,23 +79,45 @@ pub fn compose(model: &Model, solution: &Solution, results: &Results) -> Sheet {
     let mut sheet = Sheet::default();
     let mut recording = Recording::new(&mut sheet, &model.display);
     let prepared = prepare(&mut recording, model);
-    let totals: Vec<[Option<Value>; 3]> =
-        model.cases.iter().enumerate().map(|case| work_case_total(&mut recording, model, case, &prepared.loads)).collect();
+    let totals: Vec<[Option<Value>; 3]> = model
+        .cases
+        .iter()
+        .enumerate()
+        .map(|case| work_case_total(&mut recording, model, case, &prepared.loads))
+        .collect();
     let mut worked = Vec::new();
     for (at, combination) in model.combinations.iter().enumerate() {
         let solved = &solution.combinations[at];
         let silent = &results.combinations[at];
         let mut forces = Vec::new();
+        let mut all_extremes = silent.extremes.clone();
         for (member_at, member) in model.members.iter().enumerate() {
             if is_worked(model, results, member_at, at) {
-                let (member_forces, extremes) = work_one(&mut recording, model, &prepared, (member_at, solved), combination);
+                let (member_forces, extremes) =
+                    work_one(&mut recording, model, &prepared, (member_at, solved), combination);
                 let section = &prepared.sections[member.section];
                 let largest = largest_axial(&silent.forces);
                 let subject = (member_at, member);
-                work_member_checks(&mut recording, model, subject, combination, section, &member_forces, &extremes, largest);
+                work_member_checks(
+                    &mut recording,
+                    model,
+                    subject,
+                    combination,
+                    section,
+                    &member_forces,
+                    &extremes,
+                    largest,
+                );
                 forces.push(member_forces);
+                all_extremes[member_at] = extremes;
             } else {
-                forces.push(stated_forces(&mut recording, &combination.name, &member.name, &silent.forces[member_at], &silent.forces));
+                forces.push(stated_forces(
+                    &mut recording,
+                    &combination.name,
+                    &member.name,
+                    &silent.forces[member_at],
+                    &silent.forces,
+                ));
             }
         }
         let nodes: Vec<NodeBalance> = (0..model.nodes.len())
@@ -100,9 +127,11 @@ pub fn compose(model: &Model, solution: &Solution, results: &Results) -> Sheet {
             })
             .collect();
         let balance = work_whole(&mut recording, model, combination, &totals, &nodes);
-        work_node_checks(&mut recording, model, combination, &|sheet, node| node_movement(sheet, model, combination, solved, node));
+        work_node_checks(&mut recording, model, combination, &|sheet, node| {
+            node_movement(sheet, model, combination, solved, node)
+        });
         work_stability_check(&mut recording, model, combination, solved.critical.as_ref().map(|c| c.factor));
-        worked.push(CombinationWork { forces, extremes: silent.extremes.clone(), nodes, balance, checks: silent.checks.clone() });
+        worked.push(CombinationWork { forces, extremes: all_extremes, nodes, balance, checks: silent.checks.clone() });
     }
     for table in chapter::tables(model, solution, results, &worked, &mut recording) {
         recording.sheet.push_table(table);

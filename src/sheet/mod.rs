@@ -1,6 +1,6 @@
 //! The calculation sheet as data: numbered steps, tables and figures, every operand with an address.
 //! It knows no Markdown and no PDF.
-pub(crate) mod chapter;
+mod chapter;
 mod compose;
 pub mod digits;
 mod ledger;
@@ -8,6 +8,7 @@ mod recording;
 mod step;
 mod table;
 
+pub use chapter::{kind_word, quantity_text, ratio_text, sorted_checks};
 pub use compose::{Results, compose, is_worked, results};
 pub use ledger::{Entry, Ledger, Rule};
 pub use recording::{Recording, within};

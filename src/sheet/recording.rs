@@ -1,12 +1,10 @@
 //! The worksheet that writes every step down.
+use super::digits::DUST;
 use super::{Comparison, Rule, Sheet, Step};
 use crate::formula::{Definition, StepNumber, Value, Worksheet};
 use crate::model::Display;
 use crate::units::{Measure, Unit};
 use std::fmt;
-
-/// What is smaller than this against the terms it is made of is numerical dust.
-const DUST: f64 = 1e-10;
 
 /// A worksheet over a sheet.
 pub struct Recording<'a> {
@@ -99,7 +97,10 @@ impl Worksheet for Recording<'_> {
 
     fn input(&mut self, address: fmt::Arguments<'_>, si: f64, measure: Measure) -> Value {
         let address = address.to_string();
-        self.sheet.ledger.at(&address).unwrap_or_else(|| self.sheet.ledger.enter(address, si, self.display.unit(measure), Rule::Typed))
+        self.sheet
+            .ledger
+            .at(&address)
+            .unwrap_or_else(|| self.sheet.ledger.enter(address, si, self.display.unit(measure), Rule::Typed))
     }
 
     fn stated(&mut self, address: fmt::Arguments<'_>, si: f64, size: f64, measure: Measure) -> Value {

@@ -1,7 +1,7 @@
 //! The whole structure worked: sections, members, loads, every combination, every check.
 use super::{
-    Balance, CaseLoad, Check, Extremes, FactoredLoad, MemberBase, MemberForces, NodeBalance, SectionValues, factor, movements,
-    work_base, work_case_loads, work_case_total, work_extremes, work_member, work_member_checks, work_node,
+    Balance, CaseLoad, Check, Extremes, FactoredLoad, MemberBase, MemberForces, NodeBalance, SectionValues, factor,
+    movements, work_base, work_case_loads, work_case_total, work_extremes, work_member, work_member_checks, work_node,
     work_node_checks, work_stability_check, work_whole,
 };
 use crate::analysis::{CombinationSolution, Solution};
@@ -24,12 +24,15 @@ pub struct Prepared {
 /// Works sections, members' constants and loads.
 pub fn prepare(sheet: &mut dyn Worksheet, model: &Model) -> Prepared {
     let sections: Vec<SectionValues> = (0..model.sections.len()).map(|at| work_section(sheet, model, at)).collect();
-    let bases: Vec<MemberBase> = model.members.iter().map(|m| work_base(sheet, model, m, &sections[m.section])).collect();
+    let bases: Vec<MemberBase> =
+        model.members.iter().map(|m| work_base(sheet, model, m, &sections[m.section])).collect();
     let loads = model
         .members
         .iter()
         .enumerate()
-        .map(|(at, member)| model.cases.iter().map(|case| work_case_loads(sheet, (at, member), &bases[at], case)).collect())
+        .map(|(at, member)| {
+            model.cases.iter().map(|case| work_case_loads(sheet, (at, member), &bases[at], case)).collect()
+        })
         .collect();
     Prepared { sections, bases, loads }
 }
@@ -42,16 +45,18 @@ pub fn work_section(sheet: &mut dyn Worksheet, model: &Model, at: usize) -> Sect
         .into_iter()
         .map(|(key, symbol, measure, si)| {
             let value = match key.strip_prefix("plates.").and_then(|rest| rest.split_once('.')) {
-                Some((row, column)) => sheet.input(format_args!("INPUT.plates.{}.{row}.{column}", chosen.name), si, measure),
+                Some((row, column)) => {
+                    sheet.input(format_args!("INPUT.plates.{}.{row}.{column}", chosen.name), si, measure)
+                }
                 None => sheet.input(format_args!("INPUT.sections.{shape}.{}.{key}", chosen.name), si, measure),
             };
             (symbol, value)
         })
         .collect();
     let properties = section::work(chosen.kind, &chosen.given, &inputs, &chosen.name, sheet);
-    let shear_area = chosen
-        .shear_area
-        .map(|area| sheet.input(format_args!("INPUT.sections.{shape}.{}.shear_area", chosen.name), area, Measure::Area));
+    let shear_area = chosen.shear_area.map(|area| {
+        sheet.input(format_args!("INPUT.sections.{shape}.{}.shear_area", chosen.name), area, Measure::Area)
+    });
     SectionValues {
         area: Some(properties.area),
         inertia: properties.inertia,
@@ -125,7 +130,12 @@ pub fn largest_axial(forces: &[MemberForces]) -> f64 {
 }
 
 /// Works every combination with every check.
-pub fn work_all(sheet: &mut dyn Worksheet, model: &Model, prepared: &Prepared, solution: &Solution) -> Vec<CombinationWork> {
+pub fn work_all(
+    sheet: &mut dyn Worksheet,
+    model: &Model,
+    prepared: &Prepared,
+    solution: &Solution,
+) -> Vec<CombinationWork> {
     let totals: Vec<[Option<Value>; 3]> =
         model.cases.iter().enumerate().map(|case| work_case_total(sheet, model, case, &prepared.loads)).collect();
     model
@@ -146,9 +156,20 @@ pub fn work_all(sheet: &mut dyn Worksheet, model: &Model, prepared: &Prepared, s
             let mut checks = Vec::new();
             for (at, member) in model.members.iter().enumerate() {
                 let section = &prepared.sections[member.section];
-                checks.extend(work_member_checks(sheet, model, (at, member), combination, section, &forces[at], &extremes[at], largest));
+                checks.extend(work_member_checks(
+                    sheet,
+                    model,
+                    (at, member),
+                    combination,
+                    section,
+                    &forces[at],
+                    &extremes[at],
+                    largest,
+                ));
             }
-            checks.extend(work_node_checks(sheet, model, combination, &|sheet, node| node_movement(sheet, model, combination, solved, node)));
+            checks.extend(work_node_checks(sheet, model, combination, &|sheet, node| {
+                node_movement(sheet, model, combination, solved, node)
+            }));
             checks.extend(work_stability_check(sheet, model, combination, solved.critical.as_ref().map(|c| c.factor)));
             CombinationWork { forces, extremes, nodes, balance, checks }
         })

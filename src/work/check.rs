@@ -3,7 +3,9 @@ use super::{Extremes, MemberForces, SectionValues};
 use crate::catalogue::check::{self, deflection, euler, shear, slenderness, stress};
 use crate::catalogue::symbol::{I, IZ, L, RI, RZ};
 use crate::formula::{Scope, Symbol, Value, Worksheet};
-use crate::model::{Combination, DeflectionCheck, DeflectionLimit, EffectiveLength, Member, MemberKind, Model, Purpose};
+use crate::model::{
+    Combination, DeflectionCheck, DeflectionLimit, EffectiveLength, Member, MemberKind, Model, Purpose,
+};
 use crate::units::Measure;
 
 /// One row of the comparison with limits.
@@ -25,6 +27,8 @@ pub struct Check {
     pub measure: Measure,
     /// Demand over limit; `None` where it was not checked.
     pub ratio: Option<f64>,
+    /// Place of the demand along the member, m.
+    pub place: Option<f64>,
     /// Why it was not checked.
     pub why: Option<String>,
     /// The step that compares, where it was worked.
@@ -63,6 +67,7 @@ impl Bench<'_, '_> {
             limit: None,
             measure,
             ratio: None,
+            place: None,
             why: None,
             step: None,
         }
@@ -160,6 +165,7 @@ impl Bench<'_, '_> {
             self.scope.sheet().remark(limits.source.as_deref(), None);
             if row.ratio.is_none_or(|before| ratio > before) {
                 row.demand = Some(extreme.value.si.abs());
+                row.place = Some(extreme.x);
                 row.limit = Some(limit);
                 row.ratio = Some(ratio);
                 row.step = self.number(nn);
@@ -196,6 +202,7 @@ impl Bench<'_, '_> {
             None
         };
         row.demand = tau.map(|t| t.si);
+        row.place = Some(peak.x);
         row.limit = member.allowable.shear;
         row.why = match (tau, member.allowable.shear) {
             (_, None) => Some("no allowable shear stress is given".into()),
@@ -229,6 +236,7 @@ impl Bench<'_, '_> {
             }
         };
         row.demand = Some(peak.value.si.abs());
+        row.place = Some(peak.x);
         row.limit = Some(limit.si);
         if peak.value.si == 0.0 {
             row.ratio = Some(0.0);
@@ -243,7 +251,14 @@ impl Bench<'_, '_> {
     fn effective_lengths(&mut self, member: &Member) {
         let name = &member.name;
         let planes = [
-            (Some(member.in_plane.unwrap_or(EffectiveLength::Factor(1.0))), "in_plane", check::K_IN, check::L_IN, 31, &euler::LENGTH_IN),
+            (
+                Some(member.in_plane.unwrap_or(EffectiveLength::Factor(1.0))),
+                "in_plane",
+                check::K_IN,
+                check::L_IN,
+                31,
+                &euler::LENGTH_IN,
+            ),
             (member.out_of_plane, "out_of_plane", check::K_OUT, check::L_OUT, 33, &euler::LENGTH_OUT),
         ];
         for (given, key, factor, length, nn, definition) in planes {
@@ -307,7 +322,9 @@ impl Bench<'_, '_> {
             row.ratio = Some(self.compare(43, &slenderness::UTILISATION));
             row.step = self.number(43);
         } else {
-            row.why = Some("no effective length out of the plane is given; the demand shown is that in the plane alone".into());
+            row.why = Some(
+                "no effective length out of the plane is given; the demand shown is that in the plane alone".into(),
+            );
         }
         self.rows.push(row);
     }

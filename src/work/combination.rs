@@ -100,13 +100,16 @@ impl Chain<'_> {
     /// Fixed-end actions of the whole combination: each load's own times the factor of its case.
     fn fixed_end(&mut self, loads: &[FactoredLoad<'_>]) {
         for (at, symbol) in [NF1, NF2, VF1, VF2, MF1, MF2, FM].into_iter().enumerate() {
-            let parts: Vec<_> =
-                loads.iter().filter_map(|(factor, size, load)| load.worked.fixed[at].filter(|_| *size != 0.0).map(|v| (*factor, v))).collect();
+            let parts: Vec<_> = loads
+                .iter()
+                .filter_map(|(factor, size, load)| load.worked.fixed[at].filter(|_| *size != 0.0).map(|v| (*factor, v)))
+                .collect();
             if parts.is_empty() {
                 continue;
             }
             let measure = if at == 4 || at == 5 { Measure::Moment } else { Measure::Force };
-            let value = weighted_sum(&mut self.scope, &symbol, measure, &parts, ('L', at as u16 + 1), &source::FIXED_END);
+            let value =
+                weighted_sum(&mut self.scope, &symbol, measure, &parts, ('L', at as u16 + 1), &source::FIXED_END);
             self.out.fixed[at] = Some(value);
         }
     }
@@ -197,7 +200,12 @@ impl Chain<'_> {
             self.out.bottom = self.out.top;
         } else if has_fibres {
             let [t1, b1, t2, b2]: [&Known; 4] = if self.kind == MemberKind::Frame {
-                [&bending::STRESS_TOP_START, &bending::STRESS_BOTTOM_START, &bending::STRESS_TOP_END, &bending::STRESS_BOTTOM_END]
+                [
+                    &bending::STRESS_TOP_START,
+                    &bending::STRESS_BOTTOM_START,
+                    &bending::STRESS_TOP_END,
+                    &bending::STRESS_BOTTOM_END,
+                ]
             } else {
                 [
                     &bending::BENDING_STRESS_TOP_START,
@@ -284,6 +292,7 @@ pub(super) fn weighted_sum(
             }
         })
         .collect();
-    let definition = Definition::new(symbol.clone(), crate::catalogue::meaning(symbol), measure, Tree::sum(terms)).from(source);
+    let definition =
+        Definition::new(symbol.clone(), crate::catalogue::meaning(symbol), measure, Tree::sum(terms)).from(source);
     scope.work(letter, nn, &definition)
 }

@@ -85,8 +85,11 @@ pub fn work_extremes(
     loads: &[FactoredLoad<'_>],
     forces: &MemberForces,
 ) -> Extremes {
-    let carried: Vec<(Option<Value>, f64, Local)> =
-        loads.iter().filter(|(_, size, _)| *size != 0.0).filter_map(|(factor, size, load)| load.worked.local.map(|l| (*factor, *size, l))).collect();
+    let carried: Vec<(Option<Value>, f64, Local)> = loads
+        .iter()
+        .filter(|(_, size, _)| *size != 0.0)
+        .filter_map(|(factor, size, load)| load.worked.local.map(|l| (*factor, *size, l)))
+        .collect();
     let ends = Ends {
         length,
         start: [forces.n[0], forces.v[0], forces.m[0]].map(|v| v.map_or(0.0, |v| v.si)),
@@ -121,7 +124,13 @@ impl Seeker<'_, '_> {
     /// The end a place coincides with.
     fn end(&self, x: f64) -> Option<usize> {
         let tolerance = 1e-9 * self.length;
-        if x <= tolerance { Some(0) } else if x >= self.length - tolerance { Some(1) } else { None }
+        if x <= tolerance {
+            Some(0)
+        } else if x >= self.length - tolerance {
+            Some(1)
+        } else {
+            None
+        }
     }
 
     /// Makes the distance of a place known under a symbol and returns the place.
@@ -227,7 +236,8 @@ impl Seeker<'_, '_> {
         for (fibre, distance, turn) in [(Fibre::Top, YT, -1.0), (Fibre::Bottom, YB, 1.0)] {
             let bending = if bent { turn * si(&self.scope, &distance)? / si(&self.scope, &I)? } else { 0.0 };
             let peak = self.field.peak(Quantity::Mixed { axial, bending }, |stress| sign * stress);
-            let better = best.is_none_or(|(before, _)| sign * peak.value > sign * before.value + 1e-11 * before.value.abs());
+            let better =
+                best.is_none_or(|(before, _)| sign * peak.value > sign * before.value + 1e-11 * before.value.abs());
             if better {
                 best = Some((peak, fibre));
             }
@@ -264,7 +274,8 @@ impl Seeker<'_, '_> {
             fibre.word(),
             at.symbol
         );
-        let definition = Definition::new(Symbol::new("σ_x"), title, Measure::Stress, crate::formula::Tree::sum(terms)).from(&source::BENDING);
+        let definition = Definition::new(Symbol::new("σ_x"), title, Measure::Stress, crate::formula::Tree::sum(terms))
+            .from(&source::BENDING);
         let value = self.scope.work('X', nn + 4, &definition);
         Some(Extreme { x: at.x, value, fibre })
     }

@@ -1,7 +1,7 @@
 //! The loads of one case on one member (steps L).
 use super::MemberBase;
-use crate::catalogue::load::{LoadInputs, Worked, work, work_self_weight};
 use crate::catalogue::load::weight;
+use crate::catalogue::load::{LoadInputs, Worked, work, work_self_weight};
 use crate::catalogue::symbol::{FW, WG, WG1};
 use crate::formula::{Scope, Symbol, Value, Worksheet};
 use crate::model::{Action, LoadCase, Member, MemberLoad};
@@ -40,7 +40,10 @@ pub fn work_case_loads(
     });
     for (k, (entry, load)) in on_member.enumerate() {
         let inputs = load_inputs(sheet, &case.name, entry, member, load);
-        worked.push(CaseLoad { entry: Some(entry), worked: work(sheet, names, &base.known, member.kind, k + 1, load, &inputs) });
+        worked.push(CaseLoad {
+            entry: Some(entry),
+            worked: work(sheet, names, &base.known, member.kind, k + 1, load, &inputs),
+        });
     }
     worked
 }
@@ -52,7 +55,8 @@ fn scaled_weight(
     base: &MemberBase,
     case: &LoadCase,
 ) -> Option<(Symbol, Value)> {
-    let factor = sheet.input(format_args!("INPUT.loads.{case_name}.weight.factor.value"), case.self_weight, Measure::Number);
+    let factor =
+        sheet.input(format_args!("INPUT.loads.{case_name}.weight.factor.value"), case.self_weight, Measure::Number);
     let mut scope = Scope::new(sheet, member, Some(case_name));
     scope.inherit(&base.known);
     scope.set(&FW, factor);
@@ -78,7 +82,8 @@ pub fn load_inputs(
     match load {
         MemberLoad::Line { start, end, over, .. } => {
             inputs.w1 = value("lines", "w_1", *start, Measure::LineLoad);
-            inputs.w2 = if (start - end).abs() > 0.0 { value("lines", "w_2", *end, Measure::LineLoad) } else { inputs.w1 };
+            inputs.w2 =
+                if (start - end).abs() > 0.0 { value("lines", "w_2", *end, Measure::LineLoad) } else { inputs.w1 };
             if let Some([a, b]) = over {
                 inputs.a = value("lines", "from", *a, Measure::Span);
                 inputs.b = value("lines", "to", *b, Measure::Span);

@@ -86,7 +86,8 @@ pub fn work_base(sheet: &mut dyn Worksheet, model: &Model, member: &Member, sect
     }
     let weighs = model.cases.iter().any(|case| case.self_weight != 0.0);
     if weighs && material.density.is_some() {
-        inputs.push((GRAVITY, sheet.input(format_args!("INPUT.gravity.g.value"), model.gravity, Measure::Acceleration)));
+        inputs
+            .push((GRAVITY, sheet.input(format_args!("INPUT.gravity.g.value"), model.gravity, Measure::Acceleration)));
     }
 
     let mut scope = Scope::new(sheet, &member.name, None);

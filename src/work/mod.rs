@@ -9,9 +9,12 @@ mod loads;
 mod member;
 mod movement;
 mod node;
+mod structure;
 mod whole;
 
-pub use all::{CombinationWork, Prepared, factored, largest_axial, node_movement, prepare, work_all, work_one, work_section};
+pub use all::{
+    CombinationWork, Prepared, factored, largest_axial, node_movement, prepare, work_all, work_one, work_section,
+};
 pub use check::{Check, carries_shear, work_member_checks, work_node_checks, work_stability_check};
 pub use combination::{FactoredLoad, MemberForces, Movements, work_member};
 pub use extreme::{Extreme, Extremes, Fibre, work_extremes};
@@ -20,4 +23,5 @@ pub use loads::{CaseLoad, load_inputs, work_case_loads};
 pub use member::{MemberBase, SectionValues, work_base};
 pub use movement::movements;
 pub use node::{AllLoads, NodeBalance, node_load, work_node};
+pub use structure::{loadings, solve, structure};
 pub use whole::{Balance, WHOLE, work_case_total, work_whole};

@@ -19,9 +19,7 @@ pub fn movements(
     let member = &model.members[member_index];
     let own = &solution.members[member_index];
     let name = &combination.name;
-    let mut ends = [member.from, member.to].map(|node| {
-        node_movement(sheet, model, combination, solution, node)
-    });
+    let mut ends = [member.from, member.to].map(|node| node_movement(sheet, model, combination, solution, node));
     let largest = |of: &dyn Fn(&[f64; 3]) -> f64| solution.displacements.iter().map(of).fold(0.0, f64::max);
     let slide = largest(&|d| d[0].abs().max(d[1].abs()));
     let turn = largest(&|d| d[2].abs());

@@ -57,8 +57,11 @@ pub fn work_node(
     let name = &model.nodes[node].name;
     let support = model.supports.iter().find(|s| s.node == node);
     let mut balance = NodeBalance::default();
-    let factors: Vec<(usize, f64, Option<Value>)> =
-        combination.factors.iter().map(|(case, size)| (*case, *size, factor(sheet, model, combination, *case, *size))).collect();
+    let factors: Vec<(usize, f64, Option<Value>)> = combination
+        .factors
+        .iter()
+        .map(|(case, size)| (*case, *size, factor(sheet, model, combination, *case, *size)))
+        .collect();
     let mut sums: [Option<(Vec<(Option<Value>, Value, bool)>, usize)>; 3] = [None, None, None];
     for (direction, sum) in sums.iter_mut().enumerate() {
         let parts = collect(sheet, model, node, direction, forces, loads, &factors);
@@ -78,13 +81,15 @@ pub fn work_node(
             let symbol = Symbol::new(["R_x", "R_y", "R_r"][direction]);
             let title = format!("Reaction in {} that balances the node", WORDS[direction]);
             let tree = Tree::Negative(Box::new(Tree::sum(written.terms)));
-            balance.reaction[direction] = Some(scope.work('N', nn, &Definition::new(symbol, title, measure, tree).from(&source::STATICS)));
+            balance.reaction[direction] =
+                Some(scope.work('N', nn, &Definition::new(symbol, title, measure, tree).from(&source::STATICS)));
             let _ = support;
         } else {
             let symbol = Symbol::new(["B_x", "B_y", "B_r"][direction]);
             let title = format!("Balance of the node in {}", WORDS[direction]);
             let tree = Tree::sum(written.terms);
-            balance.residual[direction] = Some(scope.balance('N', nn, &Definition::new(symbol, title, measure, tree).from(&source::STATICS)));
+            balance.residual[direction] =
+                Some(scope.balance('N', nn, &Definition::new(symbol, title, measure, tree).from(&source::STATICS)));
         }
     }
     if let Some(support) = support {
@@ -190,7 +195,8 @@ fn support_laws(
         };
         let nn = 10 + direction as u16;
         if support.spring[direction].is_some() {
-            balance.spring[direction] = Some(spring(scope, model, support, combination, direction, along(x.tree(), y.tree(), r.tree())));
+            balance.spring[direction] =
+                Some(spring(scope, model, support, combination, direction, along(x.tree(), y.tree(), r.tree())));
         }
         // The reaction's part along a direction of the support must be the spring's force, or nothing where it is free.
         if support.hold[direction] || (direction < 2 && !reacts(support, direction)) {
@@ -203,7 +209,9 @@ fn support_laws(
         if (direction == 2 || !turned) && balance.reaction[direction].is_none() {
             continue;
         }
-        for (symbol, value) in [(&reaction_x, balance.reaction[0]), (&reaction_y, balance.reaction[1]), (&reaction_r, balance.reaction[2])] {
+        for (symbol, value) in
+            [(&reaction_x, balance.reaction[0]), (&reaction_y, balance.reaction[1]), (&reaction_r, balance.reaction[2])]
+        {
             scope.set(symbol, value.unwrap_or(Value::silent(0.0)));
         }
         let mut part = match (direction, turned, balance.reaction[0].is_some(), balance.reaction[1].is_some()) {
@@ -228,7 +236,14 @@ fn support_laws(
 }
 
 /// Force of a spring on the structure: its stiffness times its shortening from where it was set.
-fn spring(scope: &mut Scope<'_>, model: &Model, support: &crate::model::Support, combination: &Combination, direction: usize, moved: Tree) -> Value {
+fn spring(
+    scope: &mut Scope<'_>,
+    model: &Model,
+    support: &crate::model::Support,
+    combination: &Combination,
+    direction: usize,
+    moved: Tree,
+) -> Value {
     let name = &model.nodes[support.node].name;
     let word = ["x", "y", "r"][direction];
     let (stiffness_measure, force_measure, movement_measure) = if direction == 2 {
@@ -271,5 +286,9 @@ fn spring(scope: &mut Scope<'_>, model: &Model, support: &crate::model::Support,
     }
     let tree = -(stiffness * Tree::sum(shift));
     let title = format!("Force of the spring in its direction {word}");
-    scope.work('N', 10 + direction as u16, &Definition::new(Symbol::new("S_f"), title, force_measure, tree).from(&source::STATICS))
+    scope.work(
+        'N',
+        10 + direction as u16,
+        &Definition::new(Symbol::new("S_f"), title, force_measure, tree).from(&source::STATICS),
+    )
 }

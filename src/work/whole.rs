@@ -15,7 +15,12 @@ const fn measure(direction: usize) -> Measure {
 }
 
 /// What a load case asks for: its resultant and its moment about the global origin.
-pub fn work_case_total(sheet: &mut dyn Worksheet, model: &Model, (index, case): (usize, &LoadCase), loads: &AllLoads) -> [Option<Value>; 3] {
+pub fn work_case_total(
+    sheet: &mut dyn Worksheet,
+    model: &Model,
+    (index, case): (usize, &LoadCase),
+    loads: &AllLoads,
+) -> [Option<Value>; 3] {
     let mut parts: [Vec<(Tree, Vec<(Symbol, Value)>)>; 3] = Default::default();
     let mut count = 0;
     for of_member in loads {
@@ -103,7 +108,8 @@ pub fn work_whole(
         .zip(nodes)
         .map(|(node, balance)| {
             let mut arm = |has: bool, key: &str, si: f64| {
-                (has && si != 0.0).then(|| sheet.input(format_args!("INPUT.nodes.{}.{key}", node.name), si, Measure::Span))
+                (has && si != 0.0)
+                    .then(|| sheet.input(format_args!("INPUT.nodes.{}.{key}", node.name), si, Measure::Span))
             };
             [arm(balance.reaction[1].is_some(), "x", node.x), arm(balance.reaction[0].is_some(), "y", node.y)]
         })
@@ -125,16 +131,19 @@ pub fn work_whole(
                 None => part.tree(),
             });
         }
-        let symbols = [["A_x", "A_y", "A_m"], ["R_X", "R_Y", "R_M"], ["B_X", "B_Y", "B_M"]].map(|s| Symbol::new(s[direction]));
+        let symbols =
+            [["A_x", "A_y", "A_m"], ["R_X", "R_Y", "R_M"], ["B_X", "B_Y", "B_M"]].map(|s| Symbol::new(s[direction]));
         if !terms.is_empty() {
             let title = format!("Loads of the combination, as asked for, {}", WORDS[direction]);
-            let definition = Definition::new(symbols[0].clone(), title, measure(direction), Tree::sum(terms)).from(&source::STATICS);
+            let definition =
+                Definition::new(symbols[0].clone(), title, measure(direction), Tree::sum(terms)).from(&source::STATICS);
             out.asked[direction] = Some(scope.work('R', 1 + direction as u16, &definition));
         }
         let terms = reaction_terms(&mut scope, nodes, &arms, direction);
         if !terms.is_empty() {
             let title = format!("Reactions {}", WORDS[direction]);
-            let definition = Definition::new(symbols[1].clone(), title, measure(direction), Tree::sum(terms)).from(&source::STATICS);
+            let definition =
+                Definition::new(symbols[1].clone(), title, measure(direction), Tree::sum(terms)).from(&source::STATICS);
             out.returned[direction] = Some(scope.work('R', 11 + direction as u16, &definition));
         }
         let parts: Vec<Tree> = [(out.asked[direction], &symbols[0]), (out.returned[direction], &symbols[1])]
@@ -143,14 +152,20 @@ pub fn work_whole(
             .collect();
         if !parts.is_empty() {
             let title = format!("Loads and reactions together {}", WORDS[direction]);
-            let definition = Definition::new(symbols[2].clone(), title, measure(direction), Tree::sum(parts)).from(&source::STATICS);
+            let definition =
+                Definition::new(symbols[2].clone(), title, measure(direction), Tree::sum(parts)).from(&source::STATICS);
             out.left_over[direction] = Some(scope.balance('R', 21 + direction as u16, &definition));
         }
     }
     out
 }
 
-fn reaction_terms(scope: &mut Scope<'_>, nodes: &[NodeBalance], arms: &[[Option<Value>; 2]], direction: usize) -> Vec<Tree> {
+fn reaction_terms(
+    scope: &mut Scope<'_>,
+    nodes: &[NodeBalance],
+    arms: &[[Option<Value>; 2]],
+    direction: usize,
+) -> Vec<Tree> {
     let mut terms = Vec::new();
     for (at, balance) in nodes.iter().enumerate() {
         if let Some(value) = balance.reaction[direction] {
@@ -165,7 +180,8 @@ fn reaction_terms(scope: &mut Scope<'_>, nodes: &[NodeBalance], arms: &[[Option<
                 (balance.reaction[0], arms[at][1], ["H", "y"], true),
             ] {
                 if let (Some(force), Some(arm)) = (force, arm) {
-                    let (force_symbol, arm_symbol) = (Symbol::indexed(stems[0], at + 1), Symbol::indexed(stems[1], at + 1));
+                    let (force_symbol, arm_symbol) =
+                        (Symbol::indexed(stems[0], at + 1), Symbol::indexed(stems[1], at + 1));
                     scope.set(&force_symbol, force);
                     scope.set(&arm_symbol, arm);
                     let tree = arm_symbol * force_symbol.tree();

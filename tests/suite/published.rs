@@ -10,7 +10,9 @@ pub(crate) fn cases(folder: &str) -> Vec<PathBuf> {
         .expect("case folder")
         .map(|entry| entry.expect("entry").path())
         .filter(|path| path.extension().is_some_and(|e| e == "yaml"))
-        .filter(|path| !path.to_string_lossy().ends_with(".expected.yaml") && path.file_name().is_some_and(|n| n != "units.yaml"))
+        .filter(|path| {
+            !path.to_string_lossy().ends_with(".expected.yaml") && path.file_name().is_some_and(|n| n != "units.yaml")
+        })
         .collect();
     found.sort();
     found
@@ -52,7 +54,8 @@ fn every_published_figure_is_met() {
     let mut checked = 0;
     for path in cases("published") {
         let expected_path = path.with_extension("expected.yaml");
-        let expected: Value = serde_yaml::from_str(&fs::read_to_string(&expected_path).expect("expected")).expect("yaml");
+        let expected: Value =
+            serde_yaml::from_str(&fs::read_to_string(&expected_path).expect("expected")).expect("yaml");
         let name = path.file_stem().expect("stem").to_string_lossy().into_owned();
         let results = results(&path);
         for entry in expected["expected"].as_sequence().expect("expected list") {

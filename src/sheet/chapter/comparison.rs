@@ -1,6 +1,6 @@
 //! Comparison with limits: every check, worst first.
 use super::{Builder, Cell, words};
-use crate::model::Model;
+use crate::model::{Display, Model};
 use crate::sheet::{Recording, Results, Table};
 use crate::units::{Measure as M, Printed};
 use crate::work::Check;
@@ -13,7 +13,9 @@ pub(super) fn tables(model: &Model, results: &Results, sheet: &mut Recording<'_>
         .column("η", M::Ratio)
         .words("verdict")
         .words("step");
-    for check in sorted(results) {
+    for check in sorted_checks(results) {
+        let quantity =
+            |si: Option<f64>| si.map_or(String::new(), |si| quantity_text(&model.display, si, check.measure));
         let step = check.step.clone().filter(|number| sheet.sheet.step(number).is_some());
         let ratio = match (check.ratio, &step) {
             (None, _) => words("—"),
@@ -21,8 +23,8 @@ pub(super) fn tables(model: &Model, results: &Results, sheet: &mut Recording<'_>
             (Some(ratio), None) => words(ratio_text(ratio, model.display.digits)),
         };
         let cells = vec![
-            words(quantity_text(sheet, check.demand, check.measure)),
-            words(quantity_text(sheet, check.limit, check.measure)),
+            words(quantity(check.demand)),
+            words(quantity(check.limit)),
             ratio,
             words(verdict(check)),
             step.map_or(words(if check.ratio.is_some() { "table" } else { "" }), Cell::Address),
@@ -34,15 +36,14 @@ pub(super) fn tables(model: &Model, results: &Results, sheet: &mut Recording<'_>
 
 /// Checks by falling utilisation, those beyond first, those not checked last; ties in file order.
 #[must_use]
-pub(crate) fn sorted(results: &Results) -> Vec<&Check> {
+pub fn sorted_checks(results: &Results) -> Vec<&Check> {
     let mut checks: Vec<&Check> = results.combinations.iter().flat_map(|c| &c.checks).collect();
     checks.sort_by(|a, b| b.ratio.unwrap_or(-1.0).total_cmp(&a.ratio.unwrap_or(-1.0)));
     checks
 }
 
 /// The verdict in words.
-#[must_use]
-pub(crate) fn verdict(check: &Check) -> String {
+fn verdict(check: &Check) -> String {
     match (check.ok(), &check.why) {
         (Some(true), _) => "within".into(),
         (Some(false), _) => "BEYOND LIMIT".into(),
@@ -53,15 +54,15 @@ pub(crate) fn verdict(check: &Check) -> String {
 
 /// A utilisation, rounded up.
 #[must_use]
-pub(crate) fn ratio_text(ratio: f64, digits: u8) -> String {
+pub fn ratio_text(ratio: f64, digits: u8) -> String {
     let leading = if ratio > 0.0 { ratio.log10().floor() as i32 } else { 0 };
     Printed::up(ratio, leading.max(-3) - i32::from(digits) + 1).to_string()
 }
 
 /// A quantity in its unit to four figures.
-fn quantity_text(sheet: &Recording<'_>, si: Option<f64>, measure: M) -> String {
-    let Some(si) = si else { return String::new() };
-    let unit = sheet.unit(measure);
+#[must_use]
+pub fn quantity_text(display: &Display, si: f64, measure: M) -> String {
+    let unit = display.unit(measure);
     let value = si / unit.scale;
     let leading = if value == 0.0 { 0 } else { value.abs().log10().floor() as i32 };
     let printed = Printed::nearest(value, (leading - 3).min(0));

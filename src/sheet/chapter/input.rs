@@ -1,7 +1,10 @@
 //! The input as understood: nodes, supports, materials, sections, members, loads, combinations, limits.
 use super::{Builder, Cell, typed, words};
 use crate::catalogue::section::input_symbols;
-use crate::model::{Action, DeflectionCheck, DeflectionLimit, Direction, EffectiveLength, LoadCase, Member, MemberKind, MemberLoad, Model, Support};
+use crate::model::{
+    Action, DeflectionCheck, DeflectionLimit, Direction, EffectiveLength, LoadCase, Member, MemberKind, MemberLoad,
+    Model, Support,
+};
 use crate::sheet::{Recording, Table};
 use crate::units::Measure as M;
 
@@ -32,8 +35,9 @@ fn nodes(model: &Model, sheet: &mut Recording<'_>) -> Option<Table> {
 }
 
 /// What a support holds, in words.
-pub(crate) fn held(support: &Support) -> String {
-    let words: Vec<&str> = ["x", "y", "r"].into_iter().zip(support.hold).filter(|(_, held)| *held).map(|(word, _)| word).collect();
+fn held(support: &Support) -> String {
+    let words: Vec<&str> =
+        ["x", "y", "r"].into_iter().zip(support.hold).filter(|(_, held)| *held).map(|(word, _)| word).collect();
     match words.as_slice() {
         [] => "none".into(),
         ["x", "y", "r"] => "x, y, r (fixed)".into(),
@@ -144,7 +148,12 @@ fn sections(model: &Model, sheet: &mut Recording<'_>) -> Vec<Option<Table>> {
                     typed(sheet, format_args!("INPUT.sections.{shape}.{name}.{}", param.key), value, param.measure)
                 })
                 .collect();
-            cells.push(typed(sheet, format_args!("INPUT.sections.{shape}.{name}.shear_area"), section.shear_area, M::Area));
+            cells.push(typed(
+                sheet,
+                format_args!("INPUT.sections.{shape}.{name}.shear_area"),
+                section.shear_area,
+                M::Area,
+            ));
             cells.push(words(if section.given.turned { "turned by 90°" } else { "" }));
             cells.push(words(section.source.clone().unwrap_or_default()));
             if cells.iter().all(|c| *c == Cell::Empty) {
@@ -159,7 +168,8 @@ fn sections(model: &Model, sheet: &mut Recording<'_>) -> Vec<Option<Table>> {
 }
 
 /// The word of a member kind in the input.
-pub(crate) const fn kind_word(kind: MemberKind) -> &'static str {
+#[must_use]
+pub const fn kind_word(kind: MemberKind) -> &'static str {
     match kind {
         MemberKind::Bar => "bar",
         MemberKind::Bar3 => "bar3",
@@ -219,7 +229,8 @@ fn member_cells(model: &Model, member: &Member, sheet: &mut Recording<'_>) -> Ve
         cells.push(typed(sheet, format_args!("INPUT.members.{name}.{key}_length"), length, M::Span));
     }
     let limits = [member.allowable.tension, member.allowable.compression, member.allowable.shear];
-    for ((key, limit), path) in ["tension", "compression", "shear"].into_iter().zip(limits).zip(&member.allowable_path) {
+    for ((key, limit), path) in ["tension", "compression", "shear"].into_iter().zip(limits).zip(&member.allowable_path)
+    {
         let own = limit.filter(|_| path.starts_with("members."));
         cells.push(typed(sheet, format_args!("INPUT.members.{name}.{key}"), own, M::Stress));
     }
@@ -236,7 +247,8 @@ fn gravity(model: &Model, sheet: &mut Recording<'_>) -> Option<Table> {
     if model.cases.iter().all(|case| case.self_weight == 0.0) {
         return None;
     }
-    let mut table = Builder::new("INPUT.gravity", "Acceleration of self-weight", "symbol").column("value", M::Acceleration);
+    let mut table =
+        Builder::new("INPUT.gravity", "Acceleration of self-weight", "symbol").column("value", M::Acceleration);
     let cell = typed(sheet, format_args!("INPUT.gravity.g.value"), Some(model.gravity), M::Acceleration);
     table.row("g", vec![cell]);
     table.build(sheet)
@@ -254,7 +266,8 @@ const fn direction_word(direction: Direction) -> &'static str {
 fn loads(model: &Model, case: &LoadCase, sheet: &mut Recording<'_>) -> Vec<Option<Table>> {
     let id = |kind: &str| format!("INPUT.loads.{}.{kind}", case.name);
     let title = |what: &str| format!("{what}, load case {}", case.name);
-    let mut weight = Builder::new(id("weight"), title("Self-weight, acting along −Y"), "term").column("value", M::Number);
+    let mut weight =
+        Builder::new(id("weight"), title("Self-weight, acting along −Y"), "term").column("value", M::Number);
     let mut nodes = Builder::new(id("nodes"), title("Loads on nodes"), "entry")
         .words("node")
         .column("fx", M::Force)
@@ -273,19 +286,29 @@ fn loads(model: &Model, case: &LoadCase, sheet: &mut Recording<'_>) -> Vec<Optio
         .words("dir")
         .column("p", M::Force)
         .column("at", M::Span);
-    let mut couples = Builder::new(id("couples"), title("Couples on members"), "entry").words("member").column("m", M::Moment).column("at", M::Span);
+    let mut couples = Builder::new(id("couples"), title("Couples on members"), "entry")
+        .words("member")
+        .column("m", M::Moment)
+        .column("at", M::Span);
     let mut warming = Builder::new(id("warming"), title("Warming of members"), "entry")
         .words("member")
         .column("top", M::Temperature)
         .column("bottom", M::Temperature);
-    let mut misfit = Builder::new(id("misfit"), title("Lack of fit of members"), "entry").words("member").column("too_long", M::Length);
+    let mut misfit = Builder::new(id("misfit"), title("Lack of fit of members"), "entry")
+        .words("member")
+        .column("too_long", M::Length);
     let mut settlements = Builder::new(id("settlements"), title("Imposed movements of supports"), "entry")
         .words("node")
         .column("x", M::Length)
         .column("y", M::Length)
         .column("r", M::Rotation);
     if case.self_weight != 0.0 {
-        let cell = typed(sheet, format_args!("INPUT.loads.{}.weight.factor.value", case.name), Some(case.self_weight), M::Number);
+        let cell = typed(
+            sheet,
+            format_args!("INPUT.loads.{}.weight.factor.value", case.name),
+            Some(case.self_weight),
+            M::Number,
+        );
         weight.row("factor", vec![cell]);
     }
     for load in &case.loads {
@@ -294,16 +317,30 @@ fn loads(model: &Model, case: &LoadCase, sheet: &mut Recording<'_>) -> Vec<Optio
         match &load.acts {
             Action::Node { node, forces } => {
                 let mut cells = vec![words(&model.nodes[*node].name)];
-                for (key, force, measure) in [("fx", forces[0], M::Force), ("fy", forces[1], M::Force), ("m", forces[2], M::Moment)] {
+                for (key, force, measure) in
+                    [("fx", forces[0], M::Force), ("fy", forces[1], M::Force), ("m", forces[2], M::Moment)]
+                {
                     let force = (force != 0.0).then_some(force);
-                    cells.push(typed(sheet, format_args!("INPUT.loads.{case_name}.nodes.{entry}.{key}"), force, measure));
+                    cells.push(typed(
+                        sheet,
+                        format_args!("INPUT.loads.{case_name}.nodes.{entry}.{key}"),
+                        force,
+                        measure,
+                    ));
                 }
                 nodes.row(entry.to_string(), cells);
             }
             Action::Settle { node, movement } => {
                 let mut cells = vec![words(&model.nodes[*node].name)];
-                for (key, amount, measure) in [("x", movement[0], M::Length), ("y", movement[1], M::Length), ("r", movement[2], M::Rotation)] {
-                    cells.push(typed(sheet, format_args!("INPUT.loads.{case_name}.settlements.{entry}.{key}"), amount, measure));
+                for (key, amount, measure) in
+                    [("x", movement[0], M::Length), ("y", movement[1], M::Length), ("r", movement[2], M::Rotation)]
+                {
+                    cells.push(typed(
+                        sheet,
+                        format_args!("INPUT.loads.{case_name}.settlements.{entry}.{key}"),
+                        amount,
+                        measure,
+                    ));
                 }
                 settlements.row(entry.to_string(), cells);
             }
@@ -328,7 +365,8 @@ fn loads(model: &Model, case: &LoadCase, sheet: &mut Recording<'_>) -> Vec<Optio
                         lines.row(row, cells);
                     }
                     MemberLoad::Point { direction, .. } => {
-                        points.row(row, vec![name(), words(direction_word(*direction)), cell(inputs.p), cell(inputs.a)]);
+                        points
+                            .row(row, vec![name(), words(direction_word(*direction)), cell(inputs.p), cell(inputs.a)]);
                     }
                     MemberLoad::Moment { .. } => couples.row(row, vec![name(), cell(inputs.m), cell(inputs.a)]),
                     MemberLoad::Warm { .. } => warming.row(row, vec![name(), cell(inputs.top), cell(inputs.bottom)]),
@@ -337,7 +375,10 @@ fn loads(model: &Model, case: &LoadCase, sheet: &mut Recording<'_>) -> Vec<Optio
             }
         }
     }
-    [weight, nodes, lines, points, couples, warming, misfit, settlements].into_iter().map(|table| table.build(sheet)).collect()
+    [weight, nodes, lines, points, couples, warming, misfit, settlements]
+        .into_iter()
+        .map(|table| table.build(sheet))
+        .collect()
 }
 
 /// Rows count from 1, entries from 0.
@@ -399,7 +440,9 @@ fn limits(model: &Model, sheet: &mut Recording<'_>) -> Vec<Option<Table>> {
     for check in &checks.deflection {
         let mut cells = vec![Cell::Empty; 5];
         let (name, at, key, value, measure) = match check {
-            DeflectionCheck::Member { member, limit: DeflectionLimit::SpanOver(n) } => (&model.members[*member].name, 0, "n", *n, M::Number),
+            DeflectionCheck::Member { member, limit: DeflectionLimit::SpanOver(n) } => {
+                (&model.members[*member].name, 0, "n", *n, M::Number)
+            }
             DeflectionCheck::Member { member, limit: DeflectionLimit::Absolute(limit) } => {
                 (&model.members[*member].name, 1, "limit", *limit, M::Length)
             }

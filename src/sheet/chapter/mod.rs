@@ -3,6 +3,9 @@ mod comparison;
 mod input;
 mod result;
 
+pub use comparison::{quantity_text, ratio_text, sorted_checks};
+pub use input::kind_word;
+
 use super::{Cell, Column, Recording, Results, Row, Table};
 use crate::analysis::Solution;
 use crate::formula::{Value, Worksheet};
@@ -64,8 +67,9 @@ impl Builder {
         if self.rows.is_empty() {
             return None;
         }
-        let used: Vec<bool> =
-            (0..self.columns.len()).map(|at| self.rows.iter().any(|row| row.cells.get(at).is_some_and(|c| *c != Cell::Empty))).collect();
+        let used: Vec<bool> = (0..self.columns.len())
+            .map(|at| self.rows.iter().any(|row| row.cells.get(at).is_some_and(|c| *c != Cell::Empty)))
+            .collect();
         let columns = self
             .columns
             .into_iter()

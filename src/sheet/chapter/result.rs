@@ -46,7 +46,10 @@ fn movements(model: &Model, solution: &Solution, at: usize, sheet: &mut Recordin
         let moved = crate::work::movements(sheet, model, combination, solved, index);
         for (end, word) in ["start", "end"].into_iter().enumerate() {
             if member.hinge[end] {
-                table.row(format!("{}.{word}", member.name), vec![Cell::Empty, Cell::Empty, Cell::Quantity(moved.ends[end][2].id)]);
+                table.row(
+                    format!("{}.{word}", member.name),
+                    vec![Cell::Empty, Cell::Empty, Cell::Quantity(moved.ends[end][2].id)],
+                );
             }
         }
         if let Some([x, y]) = moved.middle {
@@ -73,12 +76,20 @@ fn reactions(model: &Model, at: usize, work: &CombinationWork, sheet: &Recording
 fn end_forces(model: &Model, at: usize, work: &CombinationWork, sheet: &Recording<'_>) -> Option<Table> {
     let name = &model.combinations[at].name;
     let mut table = Builder::new(format!("{name}.F"), format!("Member end forces, combination {name}"), "member");
-    for (symbol, measure) in [("N_1", M::Force), ("V_1", M::Force), ("M_1", M::Moment), ("N_2", M::Force), ("V_2", M::Force), ("M_2", M::Moment)] {
+    for (symbol, measure) in [
+        ("N_1", M::Force),
+        ("V_1", M::Force),
+        ("M_1", M::Moment),
+        ("N_2", M::Force),
+        ("V_2", M::Force),
+        ("M_2", M::Moment),
+    ] {
         table = table.column(symbol, measure);
     }
     table = table.note("Section forces: N tension, V = dM/dx, M positive where the −y side is stretched; 1 at the start, 2 at the end.");
     for (member, forces) in model.members.iter().zip(&work.forces) {
-        let cells = [forces.n[0], forces.v[0], forces.m[0], forces.n[1], forces.v[1], forces.m[1]].map(quantity).to_vec();
+        let cells =
+            [forces.n[0], forces.v[0], forces.m[0], forces.n[1], forces.v[1], forces.m[1]].map(quantity).to_vec();
         table.row(&member.name, cells);
     }
     table.build(sheet)
@@ -86,12 +97,18 @@ fn end_forces(model: &Model, at: usize, work: &CombinationWork, sheet: &Recordin
 
 fn joint_forces(model: &Model, at: usize, work: &CombinationWork, sheet: &Recording<'_>) -> Option<Table> {
     let name = &model.combinations[at].name;
-    let mut table = Builder::new(format!("{name}.J"), format!("Forces of members on their joints, combination {name}"), "member")
-        .column("F_x1", M::Force)
-        .column("F_y1", M::Force)
-        .column("F_x2", M::Force)
-        .column("F_y2", M::Force)
-        .note("Global axes; 1 on the start joint, 2 on the end joint. The couples are M_1 on the start and −M_2 on the end.");
+    let mut table = Builder::new(
+        format!("{name}.J"),
+        format!("Forces of members on their joints, combination {name}"),
+        "member",
+    )
+    .column("F_x1", M::Force)
+    .column("F_y1", M::Force)
+    .column("F_x2", M::Force)
+    .column("F_y2", M::Force)
+    .note(
+        "Global axes; 1 on the start joint, 2 on the end joint. The couples are M_1 on the start and −M_2 on the end.",
+    );
     for (member, forces) in model.members.iter().zip(&work.forces) {
         let [[x1, y1], [x2, y2]] = forces.on_joint;
         table.row(&member.name, [x1, y1, x2, y2].map(quantity).to_vec());
@@ -100,7 +117,13 @@ fn joint_forces(model: &Model, at: usize, work: &CombinationWork, sheet: &Record
 }
 
 /// Largest stresses; of members not worked line by line as stated values.
-fn stresses(model: &Model, results: &Results, at: usize, work: &CombinationWork, sheet: &mut Recording<'_>) -> Option<Table> {
+fn stresses(
+    model: &Model,
+    results: &Results,
+    at: usize,
+    work: &CombinationWork,
+    sheet: &mut Recording<'_>,
+) -> Option<Table> {
     let name = &model.combinations[at].name;
     let mut table = Builder::new(format!("{name}.Q"), format!("Largest stresses, combination {name}"), "member")
         .column("σ_ten", M::Stress)
@@ -111,15 +134,25 @@ fn stresses(model: &Model, results: &Results, at: usize, work: &CombinationWork,
         .words("fibre of compression")
         .words("worked")
         .note("Algebraically largest and smallest stress of each member and their distances from its start.");
-    let largest =
-        work.extremes.iter().flat_map(|e| [e.tension, e.compression]).flatten().map(|e| e.value.si.abs()).fold(0.0, f64::max);
+    let largest = work
+        .extremes
+        .iter()
+        .flat_map(|e| [e.tension, e.compression])
+        .flatten()
+        .map(|e| e.value.si.abs())
+        .fold(0.0, f64::max);
     for (index, member) in model.members.iter().enumerate() {
         let extremes = &work.extremes[index];
         let (Some(tension), Some(compression)) = (extremes.tension, extremes.compression) else { continue };
         let mut cells = Vec::new();
         let bar = matches!(member.kind, MemberKind::Bar | MemberKind::Bar3);
         for (extreme, key) in [(tension, "ten"), (compression, "com")] {
-            let stress = sheet.stated(format_args!("{name}.Q.{}.σ_{key}", member.name), extreme.value.si, largest, M::Stress);
+            let worked = is_worked(model, results, index, at) && extreme.value.id != u32::MAX;
+            let stress = if worked {
+                extreme.value
+            } else {
+                sheet.stated(format_args!("{name}.Q.{}.σ_{key}", member.name), extreme.value.si, largest, M::Stress)
+            };
             let length = results.prepared.bases[index].length;
             let place = sheet.stated(format_args!("{name}.Q.{}.x_{key}", member.name), extreme.x, length, M::Span);
             cells.push(Cell::Quantity(stress.id));
@@ -136,14 +169,18 @@ fn stresses(model: &Model, results: &Results, at: usize, work: &CombinationWork,
 fn places(model: &Model, at: usize, sheet: &mut Recording<'_>) -> Option<Table> {
     const SYMBOLS: [&str; 6] = ["x_M", "x_t", "x_c", "x_V", "x_N", "x_v"];
     let name = &model.combinations[at].name;
-    let mut table = Builder::new(format!("{name}.X"), format!("Places of extremes between the ends, combination {name}"), "member");
+    let mut table =
+        Builder::new(format!("{name}.X"), format!("Places of extremes between the ends, combination {name}"), "member");
     for symbol in SYMBOLS {
         table = table.column(symbol, M::Span);
     }
-    table = table.note("Distances from the member's start; stated, and proved by the step where shear force or slope vanishes.");
+    table = table
+        .note("Distances from the member's start; stated, and proved by the step where shear force or slope vanishes.");
     for member in &model.members {
-        let cells: Vec<Cell> =
-            SYMBOLS.iter().map(|symbol| quantity(sheet.sheet.ledger.at(&format!("{name}.X.{}.{symbol}", member.name)))).collect();
+        let cells: Vec<Cell> = SYMBOLS
+            .iter()
+            .map(|symbol| quantity(sheet.sheet.ledger.at(&format!("{name}.X.{}.{symbol}", member.name))))
+            .collect();
         if cells.iter().any(|cell| *cell != Cell::Empty) {
             table.row(&member.name, cells);
         }
@@ -154,9 +191,10 @@ fn places(model: &Model, at: usize, sheet: &mut Recording<'_>) -> Option<Table> 
 fn critical(model: &Model, solution: &Solution, at: usize, sheet: &mut Recording<'_>) -> Option<Table> {
     let name = &model.combinations[at].name;
     let factor = solution.combinations[at].critical.as_ref()?.factor;
-    let mut table = Builder::new(format!("{name}.B"), format!("Elastic critical load factor, combination {name}"), "subject")
-        .column("α_cr", M::Number)
-        .note("Stated value of an eigenvalue computation; the page cannot prove it line by line.");
+    let mut table =
+        Builder::new(format!("{name}.B"), format!("Elastic critical load factor, combination {name}"), "subject")
+            .column("α_cr", M::Number)
+            .note("Stated value of an eigenvalue computation; the page cannot prove it line by line.");
     let value = sheet.stated(format_args!("{name}.B.structure.α_cr"), factor, factor, M::Number);
     table.row("structure", vec![Cell::Quantity(value.id)]);
     table.build(sheet)
@@ -164,11 +202,12 @@ fn critical(model: &Model, solution: &Solution, at: usize, sheet: &mut Recording
 
 fn audit(model: &Model, at: usize, work: &CombinationWork, sheet: &mut Recording<'_>) -> Option<Table> {
     let name = &model.combinations[at].name;
-    let mut table = Builder::new(format!("{name}.A"), format!("Audit of loads about the global origin, combination {name}"), "sum")
-        .column("A_x", M::Force)
-        .column("A_y", M::Force)
-        .column("A_m", M::Moment)
-        .note("Asked: what the input's loads add up to. Returned: what the supports give. Left over: their sum.");
+    let mut table =
+        Builder::new(format!("{name}.A"), format!("Audit of loads about the global origin, combination {name}"), "sum")
+            .column("A_x", M::Force)
+            .column("A_y", M::Force)
+            .column("A_m", M::Moment)
+            .note("Asked: what the input's loads add up to. Returned: what the supports give. Left over: their sum.");
     let mut row = |word: &str, values: [Option<Value>; 3]| table.row(word, values.map(quantity).to_vec());
     row("asked", work.balance.asked);
     row("returned", work.balance.returned);
