@@ -11,7 +11,11 @@ use crate::formula::Symbol;
 /// What a symbol of the table stands for, in plain words.
 #[must_use]
 pub fn meaning(symbol: &Symbol) -> &'static str {
-    symbol::TABLE.iter().chain(check::SYMBOLS).find(|(text, ..)| *text == symbol.as_str()).map_or("", |(_, _, words)| words)
+    symbol::TABLE
+        .iter()
+        .chain(check::SYMBOLS)
+        .find(|(text, ..)| *text == symbol.as_str())
+        .map_or("", |(_, _, words)| words)
 }
 
 #[cfg(test)]
@@ -37,9 +41,9 @@ mod tests {
     fn every_formula_agrees_in_dimension() {
         for definition in all() {
             let of = |symbol: &Symbol| -> Dimension { measure(symbol).dimension() };
-            definition
-                .check_dimensions(&of)
-                .unwrap_or_else(|fault| panic!("{} = {}: {fault}", definition.symbol(), crate::formula::with_symbols(definition.tree())));
+            definition.check_dimensions(&of).unwrap_or_else(|fault| {
+                panic!("{} = {}: {fault}", definition.symbol(), crate::formula::with_symbols(definition.tree()))
+            });
         }
     }
 

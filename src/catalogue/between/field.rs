@@ -174,7 +174,8 @@ impl Field {
         let size = self.stretches.iter().map(|s| s.polynomial(quantity).size(s.length)).fold(0.0, f64::max);
         let mut candidates = self.candidates(quantity).into_iter();
         let first = candidates.next().unwrap_or_default();
-        candidates.fold(first, |best, peak| if score(peak.value) > score(best.value) + 1e-11 * size { peak } else { best })
+        candidates
+            .fold(first, |best, peak| if score(peak.value) > score(best.value) + 1e-11 * size { peak } else { best })
     }
 
     /// Whether the deflection has no kink at a place: only there does its slope vanish at a peak.

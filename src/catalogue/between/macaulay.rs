@@ -75,8 +75,12 @@ impl Between {
         let mut terms = vec![N1.tree()];
         for term in &self.loads {
             match &term.load {
-                Local::Line { along: Some(pair), .. } => terms.extend(term.line(at, "u", "t", pair, 1).into_iter().map(|t| -t)),
-                Local::Point { along: Some(_), a, .. } if reached(a.si, at) => terms.push(-term.factored(term.symbol("H"))),
+                Local::Line { along: Some(pair), .. } => {
+                    terms.extend(term.line(at, "u", "t", pair, 1).into_iter().map(|t| -t))
+                }
+                Local::Point { along: Some(_), a, .. } if reached(a.si, at) => {
+                    terms.push(-term.factored(term.symbol("H")))
+                }
                 _ => {}
             }
         }
@@ -94,7 +98,9 @@ impl Between {
         for term in &self.loads {
             match &term.load {
                 Local::Line { across: Some(pair), .. } => terms.extend(term.line(at, "p", "q", pair, 1)),
-                Local::Point { across: Some(_), a, .. } if reached(a.si, at) => terms.push(term.factored(term.symbol("P"))),
+                Local::Point { across: Some(_), a, .. } if reached(a.si, at) => {
+                    terms.push(term.factored(term.symbol("P")))
+                }
                 _ => {}
             }
         }
@@ -156,7 +162,10 @@ impl Between {
             match &term.load {
                 Local::Line { across: Some(pair), .. } => terms.extend(term.line(at, "p", "q", pair, times)),
                 Local::Point { across: Some(_), a, .. } if at.x > a.si => {
-                    terms.push(term.factored(over(term.symbol("P") * raised(term.from(at, "a"), times - 1), factorial(times - 1))));
+                    terms.push(term.factored(over(
+                        term.symbol("P") * raised(term.from(at, "a"), times - 1),
+                        factorial(times - 1),
+                    )));
                 }
                 _ => {}
             }
@@ -170,7 +179,8 @@ impl Between {
             if let Local::Couple { a, .. } = &term.load
                 && at.x > a.si
             {
-                terms.push(-term.factored(over(term.symbol("m") * raised(term.from(at, "a"), times), factorial(times))));
+                terms
+                    .push(-term.factored(over(term.symbol("m") * raised(term.from(at, "a"), times), factorial(times))));
             }
         }
         terms
@@ -272,7 +282,12 @@ pub fn place_of_zero_shear(between: &Between, symbol: &Symbol) -> Option<Definit
         }
     }
     (!intensity.is_empty()).then(|| {
-        Definition::new(symbol.clone(), "Place where the shear force vanishes and the moment peaks", Measure::Span, -(V1 / Tree::sum(intensity)))
-            .from(&source::STATICS)
+        Definition::new(
+            symbol.clone(),
+            "Place where the shear force vanishes and the moment peaks",
+            Measure::Span,
+            -(V1 / Tree::sum(intensity)),
+        )
+        .from(&source::STATICS)
     })
 }

@@ -49,5 +49,8 @@ check_symbols! {
 
 /// Every definition of every check.
 pub fn all() -> impl Iterator<Item = &'static Definition> {
-    [deflection::ALL, euler::ALL, shear::ALL, slenderness::ALL, stability::ALL, stress::ALL].into_iter().flatten().map(|d| &***d)
+    [deflection::ALL, euler::ALL, shear::ALL, slenderness::ALL, stability::ALL, stress::ALL]
+        .into_iter()
+        .flatten()
+        .map(|d| &***d)
 }

@@ -32,7 +32,9 @@ pub fn stiffness(kind: MemberKind, length: f64, axial: f64, bending_rigidity: f6
         let mut moved = [0.0; 6];
         moved[column] = 1.0;
         let forces: Vec<f64> = match kind {
-            MemberKind::Bar => axial_ends(axial * evaluate(&super::bar::STRAIN, &[(U, moved[1] - moved[0]), (L, length)])).to_vec(),
+            MemberKind::Bar => {
+                axial_ends(axial * evaluate(&super::bar::STRAIN, &[(U, moved[1] - moved[0]), (L, length)])).to_vec()
+            }
             MemberKind::Bar3 => {
                 let known = [(U, moved[2] - moved[0]), (UM, moved[1] - moved[0]), (L, length), (BA, axial)];
                 let start = axial * evaluate(&bar3::STRAIN_START_MOVEMENT, &known);
@@ -42,10 +44,15 @@ pub fn stiffness(kind: MemberKind, length: f64, axial: f64, bending_rigidity: f6
                 // changes along it where its middle is held.
                 vec![middle / 4.0 - start, middle, middle / 4.0 + end]
             }
-            MemberKind::Beam => bending_ends(&evaluate, length, bending_rigidity, shear, [moved[0], moved[1], moved[2], moved[3]]).to_vec(),
+            MemberKind::Beam => {
+                bending_ends(&evaluate, length, bending_rigidity, shear, [moved[0], moved[1], moved[2], moved[3]])
+                    .to_vec()
+            }
             MemberKind::Frame => {
-                let [start, end] = axial_ends(axial * evaluate(&super::bar::STRAIN, &[(U, moved[3] - moved[0]), (L, length)]));
-                let b = bending_ends(&evaluate, length, bending_rigidity, shear, [moved[1], moved[2], moved[4], moved[5]]);
+                let [start, end] =
+                    axial_ends(axial * evaluate(&super::bar::STRAIN, &[(U, moved[3] - moved[0]), (L, length)]));
+                let b =
+                    bending_ends(&evaluate, length, bending_rigidity, shear, [moved[1], moved[2], moved[4], moved[5]]);
                 vec![start, b[0], b[1], end, b[2], b[3]]
             }
         };

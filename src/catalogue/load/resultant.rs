@@ -20,7 +20,11 @@ definitions! {
 
 /// The moment of the resultant about the global origin, for the parts the load has; none where it has none.
 #[must_use]
-pub fn about_origin(has_x: bool, has_y: bool, across: bool) -> Option<&'static std::sync::LazyLock<crate::formula::Definition>> {
+pub fn about_origin(
+    has_x: bool,
+    has_y: bool,
+    across: bool,
+) -> Option<&'static std::sync::LazyLock<crate::formula::Definition>> {
     match (has_x, has_y, across) {
         (true, true, true) => Some(&ORIGIN_ACROSS),
         (true, true, false) => Some(&ORIGIN_ALONG),

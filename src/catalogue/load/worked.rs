@@ -24,9 +24,21 @@ pub struct LoadInputs {
 #[derive(Debug, Clone, Copy, PartialEq)]
 #[allow(missing_docs, reason = "named as the symbols of the same letters")]
 pub enum Local {
-    Line { a: Option<Value>, b: Option<Value>, along: Option<[Value; 2]>, across: Option<[Value; 2]> },
-    Point { a: Value, along: Option<Value>, across: Option<Value> },
-    Couple { a: Value, m: Value },
+    Line {
+        a: Option<Value>,
+        b: Option<Value>,
+        along: Option<[Value; 2]>,
+        across: Option<[Value; 2]>,
+    },
+    Point {
+        a: Value,
+        along: Option<Value>,
+        across: Option<Value>,
+    },
+    Couple {
+        a: Value,
+        m: Value,
+    },
     /// A free curvature; uniform strain changes nothing between the ends.
     Curvature(Value),
 }
@@ -168,10 +180,18 @@ impl Bench<'_, '_> {
     fn line(&mut self, direction: Direction, per_plan: bool, partial: bool, sloping: bool) {
         use component as of;
         let [x1, x2, y1, y2]: [&Known; 4] = match (direction, per_plan) {
-            (Direction::GlobalX, false) => [&of::LINE_X_ALONG_1, &of::LINE_X_ALONG_2, &of::LINE_X_ACROSS_1, &of::LINE_X_ACROSS_2],
-            (Direction::GlobalY, false) => [&of::LINE_Y_ALONG_1, &of::LINE_Y_ALONG_2, &of::LINE_Y_ACROSS_1, &of::LINE_Y_ACROSS_2],
-            (Direction::GlobalX, true) => [&of::PLAN_X_ALONG_1, &of::PLAN_X_ALONG_2, &of::PLAN_X_ACROSS_1, &of::PLAN_X_ACROSS_2],
-            (Direction::GlobalY, true) => [&of::PLAN_Y_ALONG_1, &of::PLAN_Y_ALONG_2, &of::PLAN_Y_ACROSS_1, &of::PLAN_Y_ACROSS_2],
+            (Direction::GlobalX, false) => {
+                [&of::LINE_X_ALONG_1, &of::LINE_X_ALONG_2, &of::LINE_X_ACROSS_1, &of::LINE_X_ACROSS_2]
+            }
+            (Direction::GlobalY, false) => {
+                [&of::LINE_Y_ALONG_1, &of::LINE_Y_ALONG_2, &of::LINE_Y_ACROSS_1, &of::LINE_Y_ACROSS_2]
+            }
+            (Direction::GlobalX, true) => {
+                [&of::PLAN_X_ALONG_1, &of::PLAN_X_ALONG_2, &of::PLAN_X_ACROSS_1, &of::PLAN_X_ACROSS_2]
+            }
+            (Direction::GlobalY, true) => {
+                [&of::PLAN_Y_ALONG_1, &of::PLAN_Y_ALONG_2, &of::PLAN_Y_ACROSS_1, &of::PLAN_Y_ACROSS_2]
+            }
             _ => [&of::OWN_ALONG_1, &of::OWN_ALONG_2, &of::OWN_ACROSS_1, &of::OWN_ACROSS_2],
         };
         let (has_along, has_across) = self.directions(direction, per_plan);
@@ -348,8 +368,32 @@ impl Bench<'_, '_> {
     /// Turns what goes to the joints into global axes.
     fn shares(&mut self) {
         let ends: [(usize, Symbol, Symbol, [&Known; 6]); 2] = [
-            (0, QX1, QY1, [&share::START_X, &share::START_Y, &share::START_X_ALONG, &share::START_Y_ALONG, &share::START_X_ACROSS, &share::START_Y_ACROSS]),
-            (1, QX2, QY2, [&share::END_X, &share::END_Y, &share::END_X_ALONG, &share::END_Y_ALONG, &share::END_X_ACROSS, &share::END_Y_ACROSS]),
+            (
+                0,
+                QX1,
+                QY1,
+                [
+                    &share::START_X,
+                    &share::START_Y,
+                    &share::START_X_ALONG,
+                    &share::START_Y_ALONG,
+                    &share::START_X_ACROSS,
+                    &share::START_Y_ACROSS,
+                ],
+            ),
+            (
+                1,
+                QX2,
+                QY2,
+                [
+                    &share::END_X,
+                    &share::END_Y,
+                    &share::END_X_ALONG,
+                    &share::END_Y_ALONG,
+                    &share::END_X_ACROSS,
+                    &share::END_Y_ACROSS,
+                ],
+            ),
         ];
         let (c, s) = (self.si(&C) != 0.0, self.si(&S) != 0.0);
         for (end, along, across, of) in ends {
