@@ -1,4 +1,6 @@
 //! Rectangles stacked along y, joined to one section, all centred on the y axis.
+//!
+//! Plates drawn on their centre lines overlap a little; each counts in full, as is usual for thin walls.
 use super::symbol::{SY, YC, YV};
 use super::{AREA, Ends, Given, Outline, Param, Plate, SectionKind, area, ends, plate_symbols, step};
 use crate::formula::{Definition, Symbol, Tree, source};
@@ -6,9 +8,6 @@ use crate::units::Measure;
 
 /// A built-up section.
 pub(super) struct Plates;
-
-/// Edges that lie this close, relative to the whole height, touch.
-const TOUCH: f64 = 1e-9;
 
 fn edges(plate: &Plate) -> (f64, f64) {
     (plate.at - plate.height / 2.0, plate.at + plate.height / 2.0)
@@ -35,20 +34,7 @@ impl SectionKind for Plates {
         if plates.iter().any(|p| p.width <= 0.0 || p.height <= 0.0) {
             return vec![("plates", "widths and heights must be above zero".into())];
         }
-        let mut order: Vec<usize> = (0..plates.len()).collect();
-        order.sort_by(|a, b| plates[*a].at.total_cmp(&plates[*b].at));
-        let height = edges(&plates[order[order.len() - 1]]).1 - edges(&plates[order[0]]).0;
-        let mut faults = Vec::new();
-        for pair in order.windows(2) {
-            let gap = edges(&plates[pair[1]]).0 - edges(&plates[pair[0]]).1;
-            let which = format!("plates {} and {}", pair[0] + 1, pair[1] + 1);
-            if gap < -TOUCH * height {
-                faults.push(("plates", format!("{which} overlap by {:.4} mm", -gap * 1e3)));
-            } else if gap > TOUCH * height {
-                faults.push(("plates", format!("{which} do not touch: there is a gap of {:.4} mm", gap * 1e3)));
-            }
-        }
-        faults
+        Vec::new()
     }
     fn steps(&self, given: &Given) -> Vec<(u16, Definition)> {
         let all: Vec<[Symbol; 3]> = (0..given.plates.len()).map(plate_symbols).collect();
