@@ -1,2 +1,3 @@
 //! Writers: Markdown, SVG, JSON, PDF. Each takes finished values and gives text or bytes.
 pub mod json;
+pub mod markdown;

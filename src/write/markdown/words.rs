@@ -1,0 +1,220 @@
+//! Runs of text in Markdown, escaped no more than it takes to be read back as they are.
+use super::longest_run;
+use crate::document::Inline;
+
+/// Where a run of text stands.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub(super) enum Place {
+    /// In a paragraph: each sentence begins a line.
+    Running,
+    /// In a heading or a cell: one line.
+    Row,
+    /// In the words of a link.
+    Label,
+}
+
+/// Writes runs of text. `home` gives the anchor of the heading to which a link leads.
+pub(super) fn write<'h>(inlines: &[Inline], place: Place, home: &dyn Fn(&str) -> Option<&'h str>) -> String {
+    let mut out = String::new();
+    run(inlines, place, Dress::default(), home, None, &mut out);
+    // A break at the end breaks nothing.
+    while let Some(kept) = out.strip_suffix("\\\n") {
+        out.truncate(kept.len());
+    }
+    let lines: Vec<String> = out.split('\n').map(|line| guarded(line.trim())).collect();
+    lines.join("\n")
+}
+
+/// A text of which every character means itself, on one line.
+pub(super) fn escaped(text: &str) -> String {
+    write(&[Inline::Text(text.to_string())], Place::Row, &|_| None)
+}
+
+/// Words of a heading: hashes at its end would be taken for its close.
+pub(super) fn heading(words: &str) -> String {
+    let kept = words.trim_end_matches('#');
+    if kept.len() == words.len() {
+        words.to_string()
+    } else {
+        format!("{kept}{}", "\\#".repeat(words.len() - kept.len()))
+    }
+}
+
+/// A path or an anchor as it may stand in a link.
+pub(super) fn address(text: &str) -> String {
+    let mut address = String::with_capacity(text.len());
+    for c in text.chars() {
+        if c.is_ascii_alphanumeric() || "-_./".contains(c) || !(c.is_ascii() || c.is_whitespace()) {
+            address.push(c);
+        } else {
+            let mut bytes = [0; 4];
+            c.encode_utf8(&mut bytes).bytes().for_each(|byte| address.push_str(&format!("%{byte:02X}")));
+        }
+    }
+    address
+}
+
+/// What encloses a run.
+#[derive(Debug, Clone, Copy, Default)]
+struct Dress {
+    strong: bool,
+    emphasis: bool,
+    link: bool,
+}
+
+fn run<'h>(
+    inlines: &[Inline],
+    place: Place,
+    dress: Dress,
+    home: &dyn Fn(&str) -> Option<&'h str>,
+    after: Option<char>,
+    out: &mut String,
+) {
+    for (at, inline) in inlines.iter().enumerate() {
+        let next = inlines.get(at + 1).map_or(after, first_char);
+        match inline {
+            Inline::Text(text) => push_text(text, place, dress, next, out),
+            Inline::Strong(inner) if !dress.strong => {
+                let dress = Dress { strong: true, ..dress };
+                marked("**", inner, place, dress, home, next, out);
+            }
+            Inline::Emphasis(inner) if !dress.emphasis => {
+                let dress = Dress { emphasis: true, ..dress };
+                marked("*", inner, place, dress, home, next, out);
+            }
+            Inline::Strong(inner) | Inline::Emphasis(inner) => run(inner, place, dress, home, next, out),
+            Inline::Code(text) => push_code(text, place, out),
+            Inline::Link { to, text } => match home(to).filter(|anchor| !anchor.is_empty() && !dress.link) {
+                Some(anchor) => {
+                    let dress = Dress { link: true, ..dress };
+                    out.push('[');
+                    run(text, Place::Label, dress, home, Some(']'), out);
+                    out.push_str(&format!("](#{})", address(anchor)));
+                }
+                None => run(text, place, dress, home, next, out),
+            },
+            Inline::Break if place == Place::Running => {
+                let kept = out.trim_end_matches(' ').len();
+                out.truncate(kept);
+                // A break at the very beginning, or after another, breaks nothing.
+                if !out.is_empty() && !out.ends_with('\n') {
+                    out.push_str("\\\n");
+                }
+            }
+            Inline::Break => out.push_str(if place == Place::Row { "<br>" } else { " " }),
+        }
+    }
+}
+
+/// Emphasis, where Markdown can see its bounds; otherwise the words alone.
+fn marked<'h>(
+    mark: &str,
+    inner: &[Inline],
+    place: Place,
+    dress: Dress,
+    home: &dyn Fn(&str) -> Option<&'h str>,
+    next: Option<char>,
+    out: &mut String,
+) {
+    let mut words = String::new();
+    run(inner, place, dress, home, Some('*'), &mut words);
+    let bare = words.trim();
+    let lead = &words[..words.len() - words.trim_start().len()];
+    let tail = &words[words.trim_end().len()..];
+    let before = if lead.is_empty() { out.chars().last() } else { Some(' ') };
+    let next = if tail.is_empty() { next } else { Some(' ') };
+    let first = bare.chars().next();
+    let last = bare.chars().last();
+    let free = |c: Option<char>| c.is_none_or(|c| c.is_whitespace() || (!c.is_alphanumeric() && c != '*'));
+    let opens = before != Some('*') && (free(before) || first.is_some_and(char::is_alphanumeric));
+    let closes = next != Some('*') && (free(next) || last.is_some_and(char::is_alphanumeric));
+    // Inside other emphasis the marks run together; only whole words are marked there.
+    let nested = dress.strong && dress.emphasis;
+    let apart = !nested || (before == Some(' ') && next == Some(' '));
+    out.push_str(lead);
+    if opens && closes && apart && !bare.is_empty() && !bare.contains("\\\n") {
+        out.push_str(&format!("{mark}{bare}{mark}"));
+    } else {
+        out.push_str(bare);
+    }
+    out.push_str(tail);
+}
+
+fn first_char(inline: &Inline) -> Option<char> {
+    match inline {
+        Inline::Text(text) => text.chars().next(),
+        Inline::Code(_) => Some('`'),
+        Inline::Strong(_) | Inline::Emphasis(_) => Some('*'),
+        Inline::Link { .. } => Some('['),
+        Inline::Break => Some(' '),
+    }
+}
+
+fn push_text(text: &str, place: Place, dress: Dress, next: Option<char>, out: &mut String) {
+    let plain = !(dress.strong || dress.emphasis || dress.link);
+    let chars: Vec<char> = text.chars().map(|c| if c.is_whitespace() && c != '\u{A0}' { ' ' } else { c }).collect();
+    for (at, &c) in chars.iter().enumerate() {
+        let before = at.checked_sub(1).map_or_else(|| out.chars().last(), |at| Some(chars[at]));
+        let after = chars.get(at + 1).copied().or(next);
+        if c == ' ' {
+            if out.ends_with([' ', '\n']) {
+                continue;
+            }
+            let begins = plain && place == Place::Running && ends_sentence(&chars[..at]);
+            out.push(if begins && after.is_some_and(char::is_uppercase) { '\n' } else { ' ' });
+            continue;
+        }
+        if needs_escape(c, before, after, &chars[at..]) {
+            out.push('\\');
+        }
+        out.push(c);
+    }
+}
+
+/// Whether a sentence ends here: not after a single letter, as in `A. Person`.
+fn ends_sentence(before: &[char]) -> bool {
+    match before {
+        [.., two, one, '.'] => one.is_alphanumeric() && !(one.is_uppercase() && !two.is_alphanumeric()) || *one == ')',
+        [.., '?' | '!'] => true,
+        _ => false,
+    }
+}
+
+fn needs_escape(c: char, before: Option<char>, after: Option<char>, from_here: &[char]) -> bool {
+    match c {
+        '\\' | '`' | '*' | '[' | ']' | '<' | '|' | '~' | '$' => true,
+        // Within a word it is a letter like others.
+        '_' => !(before.is_some_and(char::is_alphanumeric) && after.is_some_and(char::is_alphanumeric)),
+        '&' => after.is_some_and(|next| next.is_ascii_alphanumeric() || next == '#'),
+        // Addresses of the web would become links by themselves.
+        ':' => matches!(from_here, [_, '/', '/', ..]),
+        '.' => before == Some('w') && after.is_some_and(|next| !next.is_whitespace()),
+        _ => false,
+    }
+}
+
+fn push_code(text: &str, place: Place, out: &mut String) {
+    let text: String = text.chars().map(|c| if c.is_whitespace() && c != '\u{A0}' { ' ' } else { c }).collect();
+    if text.trim().is_empty() {
+        return;
+    }
+    // A bar ends the cell of a table even in code.
+    let text = if place == Place::Row { text.replace('|', "\\|") } else { text };
+    let fence = "`".repeat(longest_run(&text) + 1);
+    let padded = text.starts_with('`') || text.ends_with('`') || (text.starts_with(' ') && text.ends_with(' '));
+    let pad = if padded { " " } else { "" };
+    // Backticks of two runs of code must not touch.
+    if out.ends_with('`') {
+        out.push(' ');
+    }
+    out.push_str(&format!("{fence}{pad}{text}{pad}{fence}"));
+}
+
+/// A line whose beginning cannot be taken for the mark of a block.
+fn guarded(line: &str) -> String {
+    let digits = line.bytes().take_while(u8::is_ascii_digit).count();
+    if (1..=9).contains(&digits) && line[digits..].starts_with(['.', ')']) {
+        return format!("{}\\{}", &line[..digits], &line[digits..]);
+    }
+    if line.starts_with(['#', '+', '-', '=', '>']) { format!("\\{line}") } else { line.to_string() }
+}
