@@ -312,16 +312,18 @@ fn member_sheets(model: &Model, results: &Results, sheet: &Sheet, steps: &Index)
             ];
             let reason = if results.governing[at] == *c && model.combinations.len() > 1 { "governs this member" } else { "" };
             let mut groups = steps.groups(&wanted);
+            // Headings that repeat would make links depend on their order in the document.
+            groups.iter_mut().for_each(|group| group.title = format!("{}, {name}, {combination}", group.title));
             let balance = steps.find(name, Some(combination), 'N', 30..40);
             if !balance.is_empty() {
-                groups.push(Group { title: "Balance of the middle node".into(), steps: balance, ..Group::default() });
+                groups.push(Group { title: format!("Balance of the middle node, {name}, {combination}"), steps: balance, ..Group::default() });
             }
             CombinationSheet { combination: combination.clone(), reason: reason.into(), groups }
         };
         sheets.push(MemberSheet {
             member: member_fact(model, at),
             figures: figures(sheet, &[&format!("member.{name}")]),
-            groups: steps.groups(&[("Geometry and constants", name, None, 'G', 0..1000)]),
+            groups: steps.groups(&[(&format!("Geometry and constants, {name}"), name, None, 'G', 0..1000)]),
             sheets: worked.iter().map(of_combination).collect(),
         });
     }

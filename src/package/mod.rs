@@ -7,7 +7,7 @@ mod validation;
 
 pub use facts::{Origin, facts};
 
-use crate::analysis::{self, Solution};
+use crate::analysis::Solution;
 use crate::diagnostic::{Colour, Diagnostics, Source};
 use crate::document::{self, Document, Templates};
 use crate::figure::Figure;

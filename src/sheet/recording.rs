@@ -62,7 +62,7 @@ impl<'a> Recording<'a> {
             operands,
             result: result.id,
             comparison,
-            by: definition.source().map(|source| source.short.to_owned()),
+            by: None,
             note: None,
         });
         result

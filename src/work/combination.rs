@@ -63,9 +63,10 @@ pub fn work_member(
         scope.set(&symbol, value);
     }
     let mut chain = Chain { scope, kind: member.kind, out: MemberForces::default() };
-    if !movements.slack {
-        chain.fixed_end(loads);
-    }
+    // Warming and lack of fit do nothing to a bar that is slack.
+    let acting: Vec<FactoredLoad<'_>> =
+        loads.iter().filter(|(_, _, load)| !(movements.slack && load.worked.is_strain())).copied().collect();
+    chain.fixed_end(&acting);
     chain.movements(movements.middle);
     if movements.slack {
         chain.slack();
@@ -263,6 +264,14 @@ impl Chain<'_> {
         self.out.axial_strain = [Some(zero); 2];
         self.out.top = [Some(zero); 2];
         self.out.bottom = [Some(zero); 2];
+        if self.out.fixed[6].is_some() {
+            let [c, s] = [C, S].map(|symbol| self.scope.get(&symbol).map_or(0.0, |v| v.si) != 0.0);
+            let mut part = |has: bool, nn, definition: &Known| has.then(|| self.scope.work('F', nn, definition));
+            self.out.on_joint = [
+                [part(c, 11, &joint::SLACK_START_X), part(s, 12, &joint::SLACK_START_Y)],
+                [part(c, 13, &joint::SLACK_END_X), part(s, 14, &joint::SLACK_END_Y)],
+            ];
+        }
     }
 }
 

@@ -1,6 +1,6 @@
 //! From the worked members and loads to what the solver needs, and its solution.
 use super::Prepared;
-use crate::analysis::{self, Element, Failure, Loading, Solution, Structure};
+use crate::analysis::{self, Element, Failure, Loading, MemberLoading, Solution, Structure};
 use crate::catalogue::element::stiffness;
 use crate::model::{Action, MemberKind, Model};
 
@@ -22,8 +22,8 @@ pub fn structure(model: &Model, prepared: &Prepared) -> Structure {
                 tension_only: member.tension_only,
                 stiffness: stiffness(member.kind, base.length, base.axial, base.bending, base.shear),
                 axial_rigidity: base.axial,
-                bending_rigidity: if base.bending > 0.0 { base.bending } else { inertia.map_or(0.0, |i| i * modulus) },
-                shear: base.shear,
+                bending_rigidity: inertia.map(|i| i * modulus),
+                shear_flexibility: base.shear,
             }
         })
         .collect();
@@ -39,8 +39,7 @@ pub fn loadings(model: &Model, prepared: &Prepared) -> Vec<Loading> {
         .map(|combination| {
             let mut loading = Loading {
                 nodes: vec![[0.0; 3]; model.nodes.len()],
-                members: vec![[0.0; 7]; model.members.len()],
-                fixed_axial: vec![[0.0; 2]; model.members.len()],
+                members: vec![MemberLoading::default(); model.members.len()],
                 settlements: Vec::new(),
             };
             for (case_index, factor) in &combination.factors {
@@ -81,11 +80,13 @@ fn add_member_load(
     // A three-node bar's end strains carry half of the middle's load between them (see the element).
     let share = if kind == MemberKind::Bar3 { middle / 4.0 } else { 0.0 };
     let equivalent = [n1 + share, -v1, m1, share - n2, v2, -m2, middle];
-    for (sum, part) in loading.members[at].iter_mut().zip(equivalent) {
+    let member = &mut loading.members[at];
+    let of_kind = if worked.is_strain() { &mut member.strains } else { &mut member.forces };
+    for (sum, part) in of_kind.iter_mut().zip(equivalent) {
         *sum += part;
     }
-    loading.fixed_axial[at][0] += n1;
-    loading.fixed_axial[at][1] += n2;
+    member.fixed_axial[0] += n1;
+    member.fixed_axial[1] += n2;
     for (end, node) in nodes.into_iter().enumerate() {
         for (sum, part) in loading.nodes[node].iter_mut().zip(worked.share[end]) {
             *sum += factor * part.map_or(0.0, |v| v.si);

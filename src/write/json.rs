@@ -6,7 +6,13 @@ use serde_json::{Map, Value as Json, json};
 
 /// Writes the results of a package.
 #[must_use]
-pub fn write(model: &Model, sha256: &str, prepared: &Prepared, solution: &Solution, work: &[CombinationWork]) -> String {
+pub fn write(
+    model: &Model,
+    sha256: &str,
+    prepared: &Prepared,
+    solution: &Solution,
+    work: &[CombinationWork],
+) -> String {
     let mut combinations = Map::new();
     for ((combination, solved), worked) in model.combinations.iter().zip(&solution.combinations).zip(work) {
         let mut displacements = Map::new();
@@ -24,7 +30,10 @@ pub fn write(model: &Model, sha256: &str, prepared: &Prepared, solution: &Soluti
             .enumerate()
             .map(|(at, member)| {
                 let slack = solved.members[at].slack;
-                (member.name.clone(), of_member(prepared.bases[at].length, &worked.forces[at], &worked.extremes[at], slack))
+                (
+                    member.name.clone(),
+                    of_member(prepared.bases[at].length, &worked.forces[at], &worked.extremes[at], slack),
+                )
             })
             .collect::<Map<_, _>>();
         let [x, y, moment] = worked.balance.left_over.map(|v| v.map_or(0.0, |v| v.si));
@@ -45,7 +54,9 @@ pub fn write(model: &Model, sha256: &str, prepared: &Prepared, solution: &Soluti
         .zip(&prepared.sections)
         .map(|(section, values)| {
             let mut entry = Map::new();
-            for (key, value) in [("area", values.area), ("inertia", values.inertia), ("top", values.top), ("bottom", values.bottom)] {
+            for (key, value) in
+                [("area", values.area), ("inertia", values.inertia), ("top", values.top), ("bottom", values.bottom)]
+            {
                 if let Some(value) = value {
                     entry.insert(key.into(), json!(value.si));
                 }
@@ -97,7 +108,8 @@ fn of_member(length: f64, forces: &crate::work::MemberForces, extremes: &crate::
         entry.insert("peak_deflection".into(), json!({"x": peak.x, "v": peak.value.si}));
     }
     if let (Some(tension), Some(compression)) = (extremes.tension, extremes.compression) {
-        let at_end = |at: usize| json!({"top": forces.top[at].map(|v| v.si), "bottom": forces.bottom[at].map(|v| v.si)});
+        let at_end =
+            |at: usize| json!({"top": forces.top[at].map(|v| v.si), "bottom": forces.bottom[at].map(|v| v.si)});
         let peak = |peak: Extreme| json!({"value": peak.value.si, "x": peak.x, "fibre": peak.fibre.word()});
         entry.insert(
             "stress".into(),

@@ -18,7 +18,24 @@ const IMPORTS: &[(&str, &[&str])] = &[
     ("typeset", &["document", "figure", "formula", "model", "sheet", "units"]),
     ("write", &["analysis", "document", "figure", "formula", "model", "sheet", "typeset", "units", "work"]),
     ("retrace", &["diagnostic", "formula", "units"]),
-    ("package", &["analysis", "catalogue", "diagnostic", "document", "figure", "formula", "input", "model", "sheet", "typeset", "units", "work", "write"]),
+    (
+        "package",
+        &[
+            "analysis",
+            "catalogue",
+            "diagnostic",
+            "document",
+            "figure",
+            "formula",
+            "input",
+            "model",
+            "sheet",
+            "typeset",
+            "units",
+            "work",
+            "write",
+        ],
+    ),
 ];
 
 /// External crates and the only rooms that use them.
@@ -40,7 +57,8 @@ const CRATES: &[(&str, &[&str])] = &[
 
 fn sources() -> Vec<PathBuf> {
     fn walk(folder: &Path, found: &mut Vec<PathBuf>) {
-        let mut entries: Vec<PathBuf> = fs::read_dir(folder).expect("folder").map(|e| e.expect("entry").path()).collect();
+        let mut entries: Vec<PathBuf> =
+            fs::read_dir(folder).expect("folder").map(|e| e.expect("entry").path()).collect();
         entries.sort();
         for path in entries {
             if path.is_dir() {
@@ -82,8 +100,13 @@ fn rooms_import_only_what_the_house_allows() {
                 continue;
             }
             for (found, _) in line.match_indices("crate::") {
-                let other: String = line[found + 7..].chars().take_while(|c| c.is_alphanumeric() || *c == '_').collect();
-                if !other.is_empty() && other != room && IMPORTS.iter().any(|(name, _)| *name == other) && !allowed.contains(&other.as_str()) {
+                let other: String =
+                    line[found + 7..].chars().take_while(|c| c.is_alphanumeric() || *c == '_').collect();
+                if !other.is_empty()
+                    && other != room
+                    && IMPORTS.iter().any(|(name, _)| *name == other)
+                    && !allowed.contains(&other.as_str())
+                {
                     faults.push(format!("{}:{}: {room} uses {other}", path.display(), at + 1));
                 }
             }
@@ -99,12 +122,18 @@ fn outside_crates_stay_in_their_rooms() {
         let room = room(&path);
         let text = fs::read_to_string(&path).expect("text");
         for (name, rooms) in CRATES {
-            let used = text.lines().any(|line| !line.trim_start().starts_with("//") && (line.contains(&format!("{name}::")) || line.contains(&format!("use {name}"))));
+            let used = text.lines().any(|line| {
+                !line.trim_start().starts_with("//")
+                    && (line.contains(&format!("{name}::")) || line.contains(&format!("use {name}")))
+            });
             if used && !rooms.contains(&room.as_str()) {
                 faults.push(format!("{}: {name} belongs to {rooms:?}", path.display()));
             }
         }
-        let touches_files = without_tests(&text).lines().any(|line| !line.trim_start().starts_with("//") && (line.contains("std::fs") || line.contains("std::env::var") || line.contains("SystemTime::now")));
+        let touches_files = without_tests(&text).lines().any(|line| {
+            !line.trim_start().starts_with("//")
+                && (line.contains("std::fs") || line.contains("std::env::var") || line.contains("SystemTime::now"))
+        });
         if touches_files && room != "cli" {
             faults.push(format!("{}: files, clock and environment belong to cli", path.display()));
         }

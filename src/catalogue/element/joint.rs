@@ -1,6 +1,7 @@
 //! Forces of a member on the joints at its ends, in global axes.
 //!
 //! # Sign convention
+//! A slack three-node bar hands the load along it to its joints by statics.
 //! N pulls its joints together; V at the start presses the start joint down (−y) when positive, at the end up.
 use super::definitions;
 use crate::catalogue::symbol::*;
@@ -15,6 +16,10 @@ definitions! {
     BAR_START_Y: FY1, Force, S * N1, &source::TURNING;
     BAR_END_X: FX2, Force, -(C * N2), &source::TURNING;
     BAR_END_Y: FY2, Force, -(S * N2), &source::TURNING;
+    SLACK_START_X: FX1, Force, C * (NF1 + 3 * FM / 4), &source::STATICS;
+    SLACK_START_Y: FY1, Force, S * (NF1 + 3 * FM / 4), &source::STATICS;
+    SLACK_END_X: FX2, Force, C * (3 * FM / 4 - NF2), &source::STATICS;
+    SLACK_END_Y: FY2, Force, S * (3 * FM / 4 - NF2), &source::STATICS;
     BEAM_START_X: FX1, Force, S * V1, &source::TURNING;
     BEAM_START_Y: FY1, Force, -(C * V1), &source::TURNING;
     BEAM_END_X: FX2, Force, -(S * V2), &source::TURNING;

@@ -56,6 +56,14 @@ pub struct Worked {
     pub resultant: [Option<Value>; 3],
 }
 
+impl Worked {
+    /// Whether it strains the member without any force, as warming and lack of fit do.
+    #[must_use]
+    pub fn is_strain(&self) -> bool {
+        self.resultant.iter().all(Option::is_none) && self.share.iter().flatten().all(Option::is_none)
+    }
+}
+
 /// Numbers of the steps of one load, after the base that belongs to it.
 mod nn {
     pub(super) const ALONG_1: u16 = 1;
