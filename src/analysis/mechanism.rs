@@ -201,20 +201,22 @@ pub(super) fn motions(structure: &Structure, slack: &[bool], slots: &Slots, mode
 /// Independent movements that each keep as many nodes still as possible: elimination, a pivot being the first
 /// movement of the first node that moves clearly.
 fn separate(mut modes: Vec<Vec<[f64; 3]>>) -> Vec<Vec<[f64; 3]>> {
+    let nodes = modes.first().map_or(0, Vec::len);
     let mut done = 0;
     for threshold in [0.1, 1e-3] {
-        let nodes = modes.first().map_or(0, Vec::len);
         for place in 0..3 * nodes {
             let (node, direction) = (place / 3, place % 3);
-            let largest = modes[done..].iter().flatten().flatten().fold(0.0, |most: f64, v| most.max(v.abs()));
-            let best = (done..modes.len())
-                .max_by(|a, b| modes[*a][node][direction].abs().total_cmp(&modes[*b][node][direction].abs()));
+            let clear = |mode: &Vec<[f64; 3]>| {
+                let largest = mode.iter().flatten().fold(0.0, |most: f64, value| most.max(value.abs()));
+                if largest > 0.0 { mode[node][direction].abs() / largest } else { 0.0 }
+            };
+            let best = (done..modes.len()).max_by(|a, b| clear(&modes[*a]).total_cmp(&clear(&modes[*b])));
             let Some(best) = best else { return modes };
-            let pivot = modes[best][node][direction];
-            if largest <= 0.0 || pivot.abs() <= threshold * largest {
+            if clear(&modes[best]) <= threshold {
                 continue;
             }
             modes.swap(done, best);
+            let pivot = modes[done][node][direction];
             for value in modes[done].iter_mut().flatten() {
                 *value /= pivot;
             }

@@ -12,6 +12,7 @@ mod system;
 mod tension_only;
 #[cfg(test)]
 mod tests;
+mod twofold;
 
 pub use failure::{Failure, Names};
 pub use mechanism::{Motion, describe};

@@ -200,19 +200,16 @@ fn report(structure: &Structure, system: &System, loading: &Loading, state: &Sta
 ///
 /// Built up anew from the members, not from the assembled matrix, so that it checks the assembly too.
 fn residual(structure: &Structure, system: &System, loading: &Loading, state: &State) -> f64 {
-    let slots = &system.slots;
-    let (mut unbalanced, _) = loads(structure, system, loading, &state.slack);
-    let mut largest = unbalanced.iter().fold(0.0, |most: f64, value| most.max(value.abs()));
-    for (member, element) in structure.members.iter().enumerate().filter(|(member, _)| !state.slack[*member]) {
-        let freedoms = element.freedoms();
-        let movement = slots.member_movement(member, freedoms, &state.values);
-        let ends: Vec<f64> = product(&element.stiffness, &movement).iter().map(|force| -force).collect();
-        largest = ends.iter().fold(largest, |most, value| most.max(value.abs()));
-        slots.add_member_force(member, freedoms, &ends, &mut unbalanced);
-    }
-    for (slot, spring) in slots.springs.iter().enumerate() {
-        unbalanced[slot] -= spring * state.values[slot];
-    }
-    let worst = system.numbering.gather(&unbalanced).into_iter().fold(0.0, |most: f64, value| most.max(value.abs()));
-    if largest > 0.0 { worst / largest } else { 0.0 }
+    let most = |values: &[f64]| values.iter().fold(0.0, |most: f64, value| most.max(value.abs()));
+    let (forces, _) = loads(structure, system, loading, &state.slack);
+    let unbalanced = system.unbalanced(structure, &state.slack, &forces, &state.values);
+    let largest = (0..structure.members.len())
+        .filter(|member| !state.slack[*member])
+        .map(|member| {
+            let element = &structure.members[member];
+            let movement = system.slots.member_movement(member, element.freedoms(), &state.values);
+            most(&product(&element.stiffness, &movement))
+        })
+        .fold(most(&forces), f64::max);
+    if largest > 0.0 { most(&system.numbering.gather(&unbalanced)) / largest } else { 0.0 }
 }

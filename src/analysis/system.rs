@@ -1,10 +1,11 @@
 //! The equations of one structure with one set of slack bars: assembled, factorised, judged, solved.
 use super::failure::Failure;
-use super::freedom::{Numbering, Slots, State};
+use super::freedom::{Numbering, Slots};
 use super::mechanism;
 use super::skyline::{Factor, Ldl, Skyline};
 use super::spectrum::{smallest_eigenvalue, softest_modes};
 use super::structure::Structure;
+use super::twofold::Twofold;
 
 /// A scaled pivot below this raises the suspicion of a mechanism; the softest modes then decide.
 const SUSPICIOUS_PIVOT: f64 = 1e-10;
@@ -18,7 +19,6 @@ pub(super) struct System {
     pub(super) numbering: Numbering,
     /// Estimated condition number of the scaled matrix.
     pub(super) condition: f64,
-    stiffness: Skyline,
     scale: Vec<f64>,
     factor: Ldl,
 }
@@ -85,39 +85,63 @@ impl System {
         if condition.is_nan() || !(0.0..=WORST_CONDITION).contains(&condition) {
             return Err(Failure::Untrustworthy { condition: condition.abs() });
         }
-        Ok(Self { slots, numbering, condition, stiffness, scale, factor })
+        Ok(Self { slots, numbering, condition, scale, factor })
     }
 
-    /// Movements of all slots from the forces on them, `values` holding what is known beforehand.
+    /// Movements of all slots from the forces on them, `values` holding what supports impose.
     ///
-    /// Held movements come in through the members they strain. Two steps of refinement with residuals in twice the
-    /// precision bring the solution to the last digits that the matrix allows.
+    /// Solved by correction: what the members and springs leave unbalanced is found from the movements themselves in
+    /// twice the precision and solved for again, so that the rounding of the assembled matrix does not stay in the
+    /// result and imposed movements need no equations of their own.
     pub(super) fn solve(&self, structure: &Structure, slack: &[bool], forces: &[f64], values: &mut [f64]) {
-        let mut right = forces.to_vec();
-        for (member, element) in structure.members.iter().enumerate() {
-            if slack[member] || !self.moved_by_support(member, values) {
-                continue;
-            }
-            let freedoms = element.freedoms();
-            let movement = self.slots.member_movement(member, freedoms, values);
-            let ends: Vec<f64> = product(&element.stiffness, &movement).iter().map(|force| -force).collect();
-            self.slots.add_member_force(member, freedoms, &ends, &mut right);
-        }
-        let right = self.numbering.gather(&right);
-        let mut solution = vec![0.0; right.len()];
-        for _ in 0..3 {
-            let mut change = self.stiffness.residual(&solution, &right);
+        const CORRECTIONS: usize = 8;
+        let mut solution = vec![0.0; self.numbering.count()];
+        for _ in 0..CORRECTIONS {
+            let mut change = self.numbering.gather(&self.unbalanced(structure, slack, forces, values));
             self.solve_scaled(&mut change);
-            for (value, change) in solution.iter_mut().zip(change) {
+            let size = |vector: &[f64]| {
+                vector.iter().zip(&self.scale).map(|(value, scale)| (value / scale).abs()).fold(0.0, f64::max)
+            };
+            for (value, change) in solution.iter_mut().zip(&change) {
                 *value += change;
             }
+            self.numbering.scatter(&solution, values);
+            if size(&change) <= 4.0 * f64::EPSILON * size(&solution) {
+                break;
+            }
         }
-        self.numbering.scatter(&solution, values);
     }
 
-    fn moved_by_support(&self, member: usize, values: &[f64]) -> bool {
-        let mut terms = self.slots.members[member].iter().flatten();
-        terms.any(|(slot, _)| self.slots.state[*slot] == State::Held && values[*slot].abs() > 0.0)
+    /// Forces on all slots less what members and springs take up at these movements.
+    pub(super) fn unbalanced(&self, structure: &Structure, slack: &[bool], forces: &[f64], values: &[f64]) -> Vec<f64> {
+        let mut rest: Vec<Twofold> = forces.iter().map(|force| Twofold::new(*force)).collect();
+        for (member, element) in structure.members.iter().enumerate().filter(|(member, _)| !slack[*member]) {
+            let freedoms = element.freedoms();
+            let terms = &self.slots.members[member];
+            let movement: Vec<Twofold> = freedoms
+                .iter()
+                .map(|freedom| {
+                    let mut sum = Twofold::default();
+                    for (slot, factor) in terms[*freedom] {
+                        sum.add_product(factor, Twofold::new(values[slot]));
+                    }
+                    sum
+                })
+                .collect();
+            for (freedom, row) in freedoms.iter().zip(element.stiffness.chunks(freedoms.len())) {
+                let mut force = Twofold::default();
+                for (stiffness, movement) in row.iter().zip(&movement) {
+                    force.add_product(*stiffness, *movement);
+                }
+                for (slot, factor) in terms[*freedom] {
+                    rest[slot].add_product(-factor, force);
+                }
+            }
+        }
+        for ((rest, spring), value) in rest.iter_mut().zip(&self.slots.springs).zip(values) {
+            rest.add_product(-spring, Twofold::new(*value));
+        }
+        rest.into_iter().map(Twofold::value).collect()
     }
 
     fn solve_scaled(&self, right: &mut [f64]) {

@@ -90,5 +90,5 @@ fn many_members() {
     let tip = found.displacements[count as usize];
     let moved = -0.8 * tip[0] + 0.6 * tip[1];
     let expected = f64::from(count).powi(3) / 3e7;
-    assert!((moved / expected - 1.0).abs() < 1e-6, "found {moved}, expected {expected}");
+    assert!((moved / expected - 1.0).abs() < 1e-8, "found {moved}, expected {expected}");
 }
