@@ -10,9 +10,11 @@ use std::process::ExitCode;
 /// Calculation packages for small plane structures, made to be checked with a pocket calculator.
 #[derive(Parser)]
 #[command(name = "calcsheaf", version, about, max_term_width = 100)]
-#[command(after_help = "Exit codes: 0 every check within its limit · 3 package written, some check beyond its limit ·\n\
+#[command(
+    after_help = "Exit codes: 0 every check within its limit · 3 package written, some check beyond its limit ·\n\
 2 the input cannot be used · 1 anything else.\n\n\
-Example: calcsheaf pack demo-inputs/pipe-support-portal.yaml")]
+Example: calcsheaf pack demo-inputs/pipe-support-portal.yaml"
+)]
 struct Arguments {
     #[command(subcommand)]
     command: Command,

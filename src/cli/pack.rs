@@ -39,7 +39,9 @@ impl Pack {
         let bytes = match std::fs::read(input) {
             Ok(bytes) => bytes,
             Err(error) => {
-                warn(&format!("error: `{shown}` cannot be read: {error}\nhelp: give the path of an input file, such as demo-inputs/pipe-support-portal.yaml"));
+                warn(&format!(
+                    "error: `{shown}` cannot be read: {error}\nhelp: give the path of an input file, such as demo-inputs/pipe-support-portal.yaml"
+                ));
                 return Outcome::Unusable;
             }
         };
@@ -47,11 +49,18 @@ impl Pack {
             Ok(text) => text,
             Err(error) => {
                 let at = error.utf8_error().valid_up_to();
-                warn(&format!("error: `{shown}` is not UTF-8 text: byte {} cannot be read\nhelp: save the file as UTF-8 text", at + 1));
+                warn(&format!(
+                    "error: `{shown}` is not UTF-8 text: byte {} cannot be read\nhelp: save the file as UTF-8 text",
+                    at + 1
+                ));
                 return Outcome::Unusable;
             }
         };
-        let colour = if std::io::stderr().is_terminal() && std::env::var_os("NO_COLOR").is_none() { Colour::Always } else { Colour::Never };
+        let colour = if std::io::stderr().is_terminal() && std::env::var_os("NO_COLOR").is_none() {
+            Colour::Always
+        } else {
+            Colour::Never
+        };
         let solved = match package::solve(&text) {
             Ok(solved) => solved,
             Err(refusal) => {
@@ -89,7 +98,11 @@ impl Pack {
             outputs.push(Output { path: drawings.join(format!("{id}.svg")), bytes: svg.into_bytes() });
         }
         if let Err(fault) = write_all(&outputs) {
-            warn(&format!("error: `{}` cannot be written: {}\nhelp: earlier files are as they were; free room or choose another folder with --out", fault.path.display(), fault.error));
+            warn(&format!(
+                "error: `{}` cannot be written: {}\nhelp: earlier files are as they were; free room or choose another folder with --out",
+                fault.path.display(),
+                fault.error
+            ));
             return Outcome::Failed;
         }
         report(&folder, &stem, &solved, package.beyond);
@@ -102,11 +115,19 @@ fn report(folder: &Path, stem: &str, solved: &package::Solved, beyond: usize) {
     let checks = crate::sheet::sorted_checks(&solved.results);
     let unchecked = checks.iter().filter(|check| check.ratio.is_none()).count();
     let within = checks.len() - unchecked - beyond;
-    say(&format!("{}: {within} checks within their limits, {beyond} beyond, {unchecked} not checked", folder.join(stem).display()));
+    say(&format!(
+        "{}: {within} checks within their limits, {beyond} beyond, {unchecked} not checked",
+        folder.join(stem).display()
+    ));
     if let Some(worst) = checks.first()
         && let Some(ratio) = worst.ratio
     {
-        say(&format!("  governing: {} at {}{}", worst.id, crate::sheet::ratio_text(ratio, 3), if ratio > 1.0 { "  BEYOND LIMIT" } else { "" }));
+        say(&format!(
+            "  governing: {} at {}{}",
+            worst.id,
+            crate::sheet::ratio_text(ratio, 3),
+            if ratio > 1.0 { "  BEYOND LIMIT" } else { "" }
+        ));
     }
     let open = solved.model.project.assumptions.iter().filter(|a| a.confirm).count();
     if open > 0 {

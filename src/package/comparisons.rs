@@ -12,7 +12,8 @@ pub(super) fn facts(model: &Model, results: &Results, sheet: &Sheet) -> CheckFac
     let rows: Vec<CheckRow> = checks.iter().map(|check| row(model, sheet, check)).collect();
     let count = |wanted: Option<bool>| checks.iter().filter(|c| c.ok() == wanted).count();
     let kinds = ["stress", "shear", "deflection", "buckling", "slenderness", "stability"];
-    let kinds: Vec<String> = kinds.iter().filter(|kind| asked_for(model, kind)).map(|kind| (*kind).to_owned()).collect();
+    let kinds: Vec<String> =
+        kinds.iter().filter(|kind| asked_for(model, kind)).map(|kind| (*kind).to_owned()).collect();
     CheckFacts {
         governing: rows.first().filter(|row| !row.ratio.is_empty()).cloned(),
         within: count(Some(true)),
@@ -36,7 +37,8 @@ fn asked_for(model: &Model, kind: &str) -> bool {
 }
 
 fn row(model: &Model, sheet: &Sheet, check: &Check) -> CheckRow {
-    let quantity = |si: Option<f64>| si.map_or(String::new(), |si| crate::sheet::quantity_text(&model.display, si, check.measure));
+    let quantity =
+        |si: Option<f64>| si.map_or(String::new(), |si| crate::sheet::quantity_text(&model.display, si, check.measure));
     let step = check.step.as_deref().and_then(|number| sheet.step(number));
     let ratio = match (check.ratio, step) {
         (None, _) => String::new(),
@@ -44,13 +46,16 @@ fn row(model: &Model, sheet: &Sheet, check: &Check) -> CheckRow {
         (Some(ratio), None) => ratio_text(ratio, model.display.digits),
     };
     let member = model.members.iter().find(|m| m.name == check.subject);
-    let source = member.filter(|_| check.kind == "stress" || check.kind == "shear").and_then(|m| m.allowable.source.clone());
+    let source =
+        member.filter(|_| check.kind == "stress" || check.kind == "shear").and_then(|m| m.allowable.source.clone());
     CheckRow {
         id: check.id.clone(),
         subject: check.subject.clone(),
         kind: check.kind.clone(),
         combination: check.combination.clone(),
-        place: check.place.map_or(String::new(), |x| format!("x = {}", crate::sheet::quantity_text(&model.display, x, Measure::Span))),
+        place: check.place.map_or(String::new(), |x| {
+            format!("x = {}", crate::sheet::quantity_text(&model.display, x, Measure::Span))
+        }),
         demand: quantity(check.demand),
         limit: quantity(check.limit),
         source: source.unwrap_or_default(),
@@ -75,8 +80,10 @@ fn matrix(model: &Model, checks: &[&Check], kinds: &[String]) -> Vec<MatrixRow> 
         let cells = kinds
             .iter()
             .map(|kind| {
-                let of: Vec<&&Check> =
-                    checks.iter().filter(|c| c.subject == subject && is_node(c) == node && of_kind(&c.kind, kind)).collect();
+                let of: Vec<&&Check> = checks
+                    .iter()
+                    .filter(|c| c.subject == subject && is_node(c) == node && of_kind(&c.kind, kind))
+                    .collect();
                 if of.is_empty() {
                     return why_not(kind).to_owned();
                 }
@@ -88,8 +95,10 @@ fn matrix(model: &Model, checks: &[&Check], kinds: &[String]) -> Vec<MatrixRow> 
                     String::new()
                 };
                 if unchecked > 0 {
-                    let all = if unchecked == of.len() { String::new() } else { format!(" in {unchecked} of {}", of.len()) };
-                    text = if text.is_empty() { format!("NOT CHECKED{all}") } else { format!("{text}; NOT CHECKED{all}") };
+                    let all =
+                        if unchecked == of.len() { String::new() } else { format!(" in {unchecked} of {}", of.len()) };
+                    text =
+                        if text.is_empty() { format!("NOT CHECKED{all}") } else { format!("{text}; NOT CHECKED{all}") };
                 }
                 text
             })
@@ -104,7 +113,9 @@ fn matrix(model: &Model, checks: &[&Check], kinds: &[String]) -> Vec<MatrixRow> 
             "shear" if !bends => "– (a bar carries no shear)",
             "shear" if !checks.shear.covers(at) => "NOT CHECKED: switched off",
             "deflection" => "NOT CHECKED: no limit given",
-            "buckling" | "slenderness" if !bends || member.kind == crate::model::MemberKind::Frame => "– (not compressed)",
+            "buckling" | "slenderness" if !bends || member.kind == crate::model::MemberKind::Frame => {
+                "– (not compressed)"
+            }
             "buckling" | "slenderness" => "– (no axial force)",
             "stability" => "– (of the whole)",
             _ => "NOT CHECKED: no combination is for it",
@@ -115,11 +126,15 @@ fn matrix(model: &Model, checks: &[&Check], kinds: &[String]) -> Vec<MatrixRow> 
         if let DeflectionCheck::Node { node, .. } = check
             && nodes.insert(*node)
         {
-            add(&model.nodes[*node].name, true, &|kind| if kind == "deflection" { "NOT CHECKED: no combination is for it" } else { "– (of members)" });
+            add(&model.nodes[*node].name, true, &|kind| {
+                if kind == "deflection" { "NOT CHECKED: no combination is for it" } else { "– (of members)" }
+            });
         }
     }
     if model.checks.stability.is_some() {
-        add("structure", false, &|kind| if kind == "stability" { "NOT CHECKED: no combination is for it" } else { "– (of members)" });
+        add("structure", false, &|kind| {
+            if kind == "stability" { "NOT CHECKED: no combination is for it" } else { "– (of members)" }
+        });
     }
     rows
 }
@@ -127,7 +142,12 @@ fn matrix(model: &Model, checks: &[&Check], kinds: &[String]) -> Vec<MatrixRow> 
 /// Comparisons that stand on no member sheet.
 fn groups(model: &Model, sheet: &Sheet) -> Vec<Group> {
     let of = |wanted: &dyn Fn(&str) -> bool| -> Vec<String> {
-        sheet.steps.iter().filter(|step| step.comparison.is_some() && wanted(&step.number)).map(|step| step.number.clone()).collect()
+        sheet
+            .steps
+            .iter()
+            .filter(|step| step.comparison.is_some() && wanted(&step.number))
+            .map(|step| step.number.clone())
+            .collect()
     };
     let node_step = |number: &str| number.rsplit('.').next().is_some_and(|last| last.starts_with("C8"));
     let whole_step = |number: &str| number.starts_with("structure.") && number.ends_with(".C51");

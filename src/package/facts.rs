@@ -2,9 +2,9 @@
 use super::comparisons;
 use crate::analysis::Solution;
 use crate::document::{
-    AssumptionFact, BalanceSheet, BasisFact, CaseFacts, CombinationFacts, CombinationSheet, DisplayFacts, Facts, Group, InputFacts,
-    LeftOutFact, MemberFact, MemberSheet, NodeSheet, PersonFact, ProgramFacts, ProjectFacts, RevisionFact, SectionFact,
-    StructureFacts,
+    AssumptionFact, BalanceSheet, BasisFact, CaseFacts, CombinationFacts, CombinationSheet, DisplayFacts, Facts, Group,
+    InputFacts, LeftOutFact, MemberFact, MemberSheet, NodeSheet, PersonFact, ProgramFacts, ProjectFacts, RevisionFact,
+    SectionFact, StructureFacts,
 };
 use crate::model::{Detail, Model, Person, Project};
 use crate::sheet::{Results, Sheet, is_worked, kind_word};
@@ -22,7 +22,14 @@ pub struct Origin<'a> {
 
 /// Everything that the templates may speak of.
 #[must_use]
-pub fn facts(model: &Model, solution: &Solution, results: &Results, sheet: &Sheet, cautions: Vec<String>, origin: Origin<'_>) -> Facts {
+pub fn facts(
+    model: &Model,
+    solution: &Solution,
+    results: &Results,
+    sheet: &Sheet,
+    cautions: Vec<String>,
+    origin: Origin<'_>,
+) -> Facts {
     let steps = Index::new(sheet);
     Facts {
         project: project(&model.project),
@@ -45,12 +52,19 @@ pub fn facts(model: &Model, solution: &Solution, results: &Results, sheet: &Shee
         balance_sheets: model
             .combinations
             .iter()
-            .map(|c| BalanceSheet { combination: c.name.clone(), groups: steps.groups(&[("", "structure", Some(&c.name), 'R', 0..40)]) })
+            .map(|c| BalanceSheet {
+                combination: c.name.clone(),
+                groups: steps.groups(&[("", "structure", Some(&c.name), 'R', 0..40)]),
+            })
             .collect(),
         load_audit: model
             .combinations
             .iter()
-            .map(|c| Group { title: String::new(), tables: tables(sheet, &[&format!("{}.A", c.name)]), ..Group::default() })
+            .map(|c| Group {
+                title: String::new(),
+                tables: tables(sheet, &[&format!("{}.A", c.name)]),
+                ..Group::default()
+            })
             .collect(),
         member_sheets: member_sheets(model, results, sheet, &steps),
         second_answers: Vec::new(),
@@ -70,7 +84,7 @@ pub fn facts(model: &Model, solution: &Solution, results: &Results, sheet: &Shee
             .collect(),
         input: InputFacts { name: origin.name.into(), sha256: origin.sha256.into(), text: origin.text.into() },
         program: ProgramFacts {
-            version: format!("calcsheaf {}", env!("CARGO_PKG_VERSION")),
+            version: env!("CARGO_PKG_VERSION").into(),
             validated: super::validation::COVERED.iter().map(|line| (*line).to_owned()).collect(),
             uncovered: super::validation::uncovered(model),
         },
@@ -147,14 +161,23 @@ impl Index {
             };
             let mut characters = last.chars();
             if let (Some(letter), Ok(nn)) = (characters.next(), characters.as_str().parse::<u16>()) {
-                steps.entry((subject.to_owned(), combination.to_owned(), letter)).or_default().push((nn, step.number.clone()));
+                steps
+                    .entry((subject.to_owned(), combination.to_owned(), letter))
+                    .or_default()
+                    .push((nn, step.number.clone()));
             }
         }
         steps.values_mut().for_each(|list| list.sort());
         Self { steps }
     }
 
-    fn find(&self, subject: &str, combination: Option<&String>, letter: char, range: std::ops::Range<u16>) -> Vec<String> {
+    fn find(
+        &self,
+        subject: &str,
+        combination: Option<&String>,
+        letter: char,
+        range: std::ops::Range<u16>,
+    ) -> Vec<String> {
         let key = (subject.to_owned(), combination.cloned().unwrap_or_default(), letter);
         self.steps.get(&key).map_or_else(Vec::new, |list| {
             list.iter().filter(|(nn, _)| range.contains(nn)).map(|(_, number)| number.clone()).collect()
@@ -201,7 +224,9 @@ fn structure(model: &Model, sheet: &Sheet, steps: &Index) -> StructureFacts {
     if !gravity_given && model.cases.iter().any(|c| c.self_weight != 0.0) {
         defaults.push("Gravity is standard gravity, 9.80665 m/s².".into());
     }
-    if (model.checks.buckling.is_some() || model.checks.slenderness.is_some()) && model.members.iter().any(|m| m.in_plane.is_none()) {
+    if (model.checks.buckling.is_some() || model.checks.slenderness.is_some())
+        && model.members.iter().any(|m| m.in_plane.is_none())
+    {
         defaults.push("The effective length factor in the plane is 1 where none is given.".into());
     }
     if model.combinations.iter().any(|c| c.implied) {
@@ -258,10 +283,14 @@ fn case(model: &Model, case: &crate::model::LoadCase, sheet: &Sheet, steps: &Ind
 fn combination(model: &Model, solution: &Solution, at: usize, sheet: &Sheet) -> CombinationFacts {
     let combination = &model.combinations[at];
     let name = &combination.name;
-    let factors = combination.factors.iter().map(|(case, factor)| format!("{factor}·{}", model.cases[*case].name).replace('-', "−"));
+    let factors = combination
+        .factors
+        .iter()
+        .map(|(case, factor)| format!("{factor}·{}", model.cases[*case].name).replace('-', "−"));
     let solved = &solution.combinations[at];
     let ids: Vec<String> = ["U", "R", "F", "J", "Q", "X", "B"].iter().map(|kind| format!("{name}.{kind}")).collect();
-    let drawings: Vec<String> = ["deflected", "N", "V", "M", "buckling"].iter().map(|kind| format!("{name}.{kind}")).collect();
+    let drawings: Vec<String> =
+        ["deflected", "N", "V", "M", "buckling"].iter().map(|kind| format!("{name}.{kind}")).collect();
     CombinationFacts {
         name: name.clone(),
         title: text(combination.title.as_ref()),
@@ -270,8 +299,17 @@ fn combination(model: &Model, solution: &Solution, at: usize, sheet: &Sheet) -> 
             list.iter().map(|p| format!("{p:?}").to_lowercase()).collect::<Vec<_>>().join(", ")
         }),
         implied: combination.implied,
-        critical: solved.critical.as_ref().map_or(String::new(), |c| format!("{:.2}", (c.factor * 100.0).floor() / 100.0)),
-        slack: model.members.iter().zip(&solved.members).filter(|(_, m)| m.slack).map(|(m, _)| m.name.clone()).collect(),
+        critical: solved
+            .critical
+            .as_ref()
+            .map_or(String::new(), |c| format!("{:.2}", (c.factor * 100.0).floor() / 100.0)),
+        slack: model
+            .members
+            .iter()
+            .zip(&solved.members)
+            .filter(|(_, m)| m.slack)
+            .map(|(m, _)| m.name.clone())
+            .collect(),
         tables: ids.into_iter().filter(|id| sheet.table(id).is_some()).collect(),
         figures: drawings.into_iter().filter(|id| sheet.figure(id).is_some()).collect(),
     }
@@ -310,13 +348,18 @@ fn member_sheets(model: &Model, results: &Results, sheet: &Sheet, steps: &Index)
                 ("Shear stress", name, Some(combination), 'S', 10..1000),
                 ("Comparison with limits", name, Some(combination), 'C', 0..80),
             ];
-            let reason = if results.governing[at] == *c && model.combinations.len() > 1 { "governs this member" } else { "" };
+            let reason =
+                if results.governing[at] == *c && model.combinations.len() > 1 { "governs this member" } else { "" };
             let mut groups = steps.groups(&wanted);
             // Headings that repeat would make links depend on their order in the document.
             groups.iter_mut().for_each(|group| group.title = format!("{}, {name}, {combination}", group.title));
             let balance = steps.find(name, Some(combination), 'N', 30..40);
             if !balance.is_empty() {
-                groups.push(Group { title: format!("Balance of the middle node, {name}, {combination}"), steps: balance, ..Group::default() });
+                groups.push(Group {
+                    title: format!("Balance of the middle node, {name}, {combination}"),
+                    steps: balance,
+                    ..Group::default()
+                });
             }
             CombinationSheet { combination: combination.clone(), reason: reason.into(), groups }
         };

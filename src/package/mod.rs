@@ -97,7 +97,13 @@ impl Solved {
     /// The results file.
     #[must_use]
     pub fn json(&self) -> String {
-        write::json::write(&self.model, &self.sha256, &self.results.prepared, &self.solution, &self.results.combinations)
+        write::json::write(
+            &self.model,
+            &self.sha256,
+            &self.results.prepared,
+            &self.solution,
+            &self.results.combinations,
+        )
     }
 
     /// The package but for the PDF.
@@ -113,7 +119,8 @@ impl Solved {
         let document = document::build(&facts, templates)?;
         let stem = name.strip_suffix(".yaml").or_else(|| name.strip_suffix(".yml")).unwrap_or(name);
         let markdown = write::markdown::write(&document, &sheet, stem);
-        let figures = sheet.figures.iter().map(|figure: &Figure| (figure.id.clone(), write::svg::write(figure))).collect();
+        let figures =
+            sheet.figures.iter().map(|figure: &Figure| (figure.id.clone(), write::svg::write(figure))).collect();
         let beyond = facts.checks.beyond;
         Ok(Package { sheet, document, markdown, results: self.json(), figures, beyond })
     }
@@ -127,4 +134,3 @@ impl Solved {
         write::pdf::write(&pages, fonts).map_err(|fault| fault.to_string())
     }
 }
-

@@ -16,9 +16,14 @@ pub(super) const COVERED: &[&str] = &[
 /// Features this input uses that no case covers by itself.
 pub(super) fn uncovered(model: &Model) -> Vec<String> {
     let mut lines = Vec::new();
-    let shear = model.members.iter().any(|m| model.materials[m.material].shear_modulus.is_some() && model.sections[m.section].shear_area.is_some());
+    let shear = model
+        .members
+        .iter()
+        .any(|m| model.materials[m.material].shear_modulus.is_some() && model.sections[m.section].shear_area.is_some());
     if shear {
-        lines.push("Shear deformation: covered by random structures against a separate solver, by no published case.".into());
+        lines.push(
+            "Shear deformation: covered by random structures against a separate solver, by no published case.".into(),
+        );
     }
     lines
 }

@@ -125,7 +125,7 @@ fn closing(value: f64, found: f64, place: i32) -> Printed {
 /// Zero, printed to the finest place at which the line closes: numerical dust is no number.
 fn zero(found: f64, owed: i32, place: i32) -> Printed {
     let finest = (place..=owed).find(|place| found.abs() <= SLACK * 10f64.powi(*place)).unwrap_or(owed);
-    if found == 0.0 { Printed { count: 0, place: owed } } else { closing(0.0, found, finest) }
+    if found == 0.0 { Printed { count: 0, place: 0 } } else { closing(0.0, found, finest) }
 }
 
 /// What the printed operands of a step give, in the unit of its result.
@@ -139,6 +139,8 @@ fn owed_place(entry: &super::Entry, digits: i32) -> i32 {
     let in_unit = entry.in_unit();
     let place = match entry.rule {
         Rule::Typed => typed_place(in_unit),
+        // Round dimensions stay as short as they are.
+        Rule::Shared if says_exactly(in_unit, leading(in_unit) - (digits - 1)) => leading(in_unit) - (digits - 1),
         Rule::Shared => leading(in_unit) - (SHARED_DIGITS - 1),
         Rule::Owed => leading(in_unit) - (digits - 1),
         // A utilisation far below its limit needs no more decimals than one near it.

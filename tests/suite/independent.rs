@@ -58,7 +58,8 @@ fn random_structures_agree_with_a_separate_solver() {
     let mut structures = 0;
     for path in cases("independent") {
         let expected_path = path.with_extension("expected.json");
-        let expected: Value = serde_json::from_str(&fs::read_to_string(&expected_path).expect("expected")).expect("json");
+        let expected: Value =
+            serde_json::from_str(&fs::read_to_string(&expected_path).expect("expected")).expect("json");
         let name = path.file_stem().expect("stem").to_string_lossy().into_owned();
         let found = results(&path);
         let mut sizes = std::collections::BTreeMap::new();
@@ -70,5 +71,10 @@ fn random_structures_agree_with_a_separate_solver() {
         structures += 1;
     }
     assert!(structures >= 20, "only {structures} structures found");
-    assert!(faults.is_empty(), "{} faults:\n{}", faults.len(), faults.iter().take(40).cloned().collect::<Vec<_>>().join("\n"));
+    assert!(
+        faults.is_empty(),
+        "{} faults:\n{}",
+        faults.len(),
+        faults.iter().take(40).cloned().collect::<Vec<_>>().join("\n")
+    );
 }

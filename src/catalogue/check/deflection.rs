@@ -6,6 +6,6 @@ use crate::formula::source;
 
 definitions! {
     LIMIT: DELTA_LIMIT, Length, L / SPAN_DIVISOR, &source::ALLOWABLE;
-    UTILISATION: ETA, Ratio, DELTA.tree().absolute() / DELTA_LIMIT, &source::ALLOWABLE;
-    NODE_ROTATION: ETA, Ratio, ROTATION.tree().absolute() / ROTATION_LIMIT, &source::ALLOWABLE;
+    UTILISATION: ETA "Utilisation of the deflection limit", Ratio, DELTA.tree().absolute() / DELTA_LIMIT, &source::ALLOWABLE;
+    NODE_ROTATION: ETA "Utilisation of the rotation limit", Ratio, ROTATION.tree().absolute() / ROTATION_LIMIT, &source::ALLOWABLE;
 }

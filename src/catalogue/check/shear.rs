@@ -10,5 +10,5 @@ use crate::formula::source;
 definitions! {
     STRESS: TAU, Stress, VMAX.tree().absolute() * Q / (I * BW), &source::SHEAR_STRESS;
     MEAN_STRESS: TAU, Stress, VMAX.tree().absolute() / AV, &source::SHEAR_STRESS;
-    UTILISATION: ETA, Ratio, TAU / SHEAR_LIMIT, &source::ALLOWABLE;
+    UTILISATION: ETA "Utilisation in shear", Ratio, TAU / SHEAR_LIMIT, &source::ALLOWABLE;
 }

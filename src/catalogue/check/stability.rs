@@ -4,5 +4,5 @@ use crate::catalogue::element::definitions;
 use crate::formula::source;
 
 definitions! {
-    UTILISATION: ETA, Ratio, ALPHA_LEAST / ALPHA_CR, &source::EULER;
+    UTILISATION: ETA "Utilisation of the critical load factor", Ratio, ALPHA_LEAST / ALPHA_CR, &source::EULER;
 }

@@ -4,6 +4,6 @@ use crate::catalogue::element::definitions;
 use crate::formula::source;
 
 definitions! {
-    TENSION: ETA, Ratio, SIGMA / TENSION_LIMIT, &source::ALLOWABLE;
-    COMPRESSION: ETA, Ratio, SIGMA.tree().absolute() / COMPRESSION_LIMIT, &source::ALLOWABLE;
+    TENSION: ETA "Utilisation in tension", Ratio, SIGMA / TENSION_LIMIT, &source::ALLOWABLE;
+    COMPRESSION: ETA "Utilisation in compression", Ratio, SIGMA.tree().absolute() / COMPRESSION_LIMIT, &source::ALLOWABLE;
 }

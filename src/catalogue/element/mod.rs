@@ -11,13 +11,14 @@ pub use stiffness::stiffness;
 
 use crate::formula::Definition;
 
-/// Makes lazily built definitions. The plain words come from the symbol table; each file lists its own as `ALL`.
+/// Makes lazily built definitions. The plain words come from the symbol table unless a title follows the symbol; each file lists its own as `ALL`.
 macro_rules! definitions {
-    ($($name:ident : $symbol:expr, $measure:ident, $tree:expr, $source:expr;)*) => {
+    ($($name:ident : $symbol:ident $($title:literal)?, $measure:ident, $tree:expr, $source:expr;)*) => {
         $(
             #[doc = concat!("`", stringify!($symbol), " = ", stringify!($tree), "`")]
             pub static $name: std::sync::LazyLock<crate::formula::Definition> = std::sync::LazyLock::new(|| {
-                crate::formula::Definition::new($symbol, crate::catalogue::meaning(&$symbol), crate::units::Measure::$measure, $tree)
+                let titles = [$($title,)? crate::catalogue::meaning(&$symbol)];
+                crate::formula::Definition::new($symbol, titles[0], crate::units::Measure::$measure, $tree)
                     .from($source)
             });
         )*

@@ -1,4 +1,5 @@
 //! Loads on members: parts along and across, fixed-end actions, shares carried to the joints, resultant.
+mod bench;
 pub mod component;
 pub mod couple;
 pub mod fixed_end;

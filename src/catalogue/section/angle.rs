@@ -34,21 +34,58 @@ impl SectionKind for Angle {
     }
     fn steps(&self, given: &Given) -> Vec<(u16, Definition)> {
         // About a side along leg `along`, from which the other leg rises by `up`.
-        let first = |along: &Symbol, up: &Symbol| along.clone() * T.squared() / 2 + T * (up.squared() - T.squared()) / 2;
+        let first =
+            |along: &Symbol, up: &Symbol| along.clone() * T.squared() / 2 + T * (up.squared() - T.squared()) / 2;
         let second = |along: &Symbol, up: &Symbol, centroid: &Symbol| {
             along.clone() * T.cubed() / 3 + T * (up.cubed() - T.cubed()) / 3 - AREA * centroid.squared()
         };
         let mut steps = vec![
             area(B * T + (H - T.tree()) * T),
-            step(38, SY, "First moment of area about the outside of the width leg", Measure::AreaMoment, first(&B, &H), &source::PLANE_FIGURES),
-            step(39, SZ, "First moment of area about the outside of the depth leg", Measure::AreaMoment, first(&H, &B), &source::PLANE_FIGURES),
+            step(
+                38,
+                SY,
+                "First moment of area about the outside of the width leg",
+                Measure::AreaMoment,
+                first(&B, &H),
+                &source::PLANE_FIGURES,
+            ),
+            step(
+                39,
+                SZ,
+                "First moment of area about the outside of the depth leg",
+                Measure::AreaMoment,
+                first(&H, &B),
+                &source::PLANE_FIGURES,
+            ),
         ];
-        steps.push(step(41, YC, "Distance of the centroid from the outside of the width leg", Measure::Length, SY / AREA, &source::PLANE_FIGURES));
-        steps.push(step(42, ZC, "Distance of the centroid from the outside of the depth leg", Measure::Length, SZ / AREA, &source::PLANE_FIGURES));
+        steps.push(step(
+            41,
+            YC,
+            "Distance of the centroid from the outside of the width leg",
+            Measure::Length,
+            SY / AREA,
+            &source::PLANE_FIGURES,
+        ));
+        steps.push(step(
+            42,
+            ZC,
+            "Distance of the centroid from the outside of the depth leg",
+            Measure::Length,
+            SZ / AREA,
+            &source::PLANE_FIGURES,
+        ));
         let (upright, across) = (second(&B, &H, &YC), second(&H, &B, &ZC));
-        let (reach, centroid, inertia, minor_inertia) = if given.turned { (B, ZC, across, upright) } else { (H, YC, upright, across) };
+        let (reach, centroid, inertia, minor_inertia) =
+            if given.turned { (B, ZC, across, upright) } else { (H, YC, upright, across) };
         let level = Tree::Max(vec![centroid.tree(), T.into()]);
-        steps.push(step(59, YV, "Level of the largest shear stress above the lower side", Measure::Length, level, &source::SHEAR_STRESS));
+        steps.push(step(
+            59,
+            YV,
+            "Level of the largest shear stress above the lower side",
+            Measure::Length,
+            level,
+            &source::SHEAR_STRESS,
+        ));
         steps.extend(ends(Ends {
             top: reach.clone() - centroid.tree(),
             bottom: centroid.tree(),

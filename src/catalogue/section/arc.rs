@@ -8,10 +8,24 @@ use crate::units::Measure;
 /// # Source
 /// The square r² less the quarter circle πr²/4: first moment r³(10 − 3π)/12, second moment about a side
 /// r⁴(1 − 5π/16), from [`source::PLANE_FIGURES`].
-pub(super) fn corner(nn: u16, r: &Symbol, area: &Symbol, centroid: &Symbol, inertia: &Symbol, what: &str) -> Vec<(u16, Definition)> {
+pub(super) fn corner(
+    nn: u16,
+    r: &Symbol,
+    area: &Symbol,
+    centroid: &Symbol,
+    inertia: &Symbol,
+    what: &str,
+) -> Vec<(u16, Definition)> {
     let pi = || Tree::Pi;
     vec![
-        step(nn, area.clone(), &format!("Area of one {what}"), Measure::Area, (Tree::from(1) - pi() / 4) * r.squared(), &source::PLANE_FIGURES),
+        step(
+            nn,
+            area.clone(),
+            &format!("Area of one {what}"),
+            Measure::Area,
+            (Tree::from(1) - pi() / 4) * r.squared(),
+            &source::PLANE_FIGURES,
+        ),
         step(
             nn + 1,
             centroid.clone(),

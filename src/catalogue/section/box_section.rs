@@ -44,7 +44,10 @@ impl SectionKind for BoxSection {
         if let (Some(h), Some(b), Some(t)) = (given.get(&H), given.get(&B), given.get(&T)) {
             let least = h.min(b);
             if t >= least / 2.0 {
-                faults.push(("wall", "it must be less than half the depth and half the width; a solid is `shape: rectangle`".into()));
+                faults.push((
+                    "wall",
+                    "it must be less than half the depth and half the width; a solid is `shape: rectangle`".into(),
+                ));
             }
             if given.get(&RO).is_some_and(|r| r > least / 2.0) {
                 faults.push(("outer_radius", "it must not be more than half the smaller side".into()));
@@ -55,7 +58,10 @@ impl SectionKind for BoxSection {
             if let (Some(outer), Some(inner)) = (given.get(&RO), given.get(&RI))
                 && outer - t > inner + t * (std::f64::consts::SQRT_2 - 1.0) / std::f64::consts::SQRT_2 * 10.0
             {
-                faults.push(("outer_radius", "with so small an inner radius it cuts through the wall at the corners".into()));
+                faults.push((
+                    "outer_radius",
+                    "with so small an inner radius it cuts through the wall at the corners".into(),
+                ));
             }
         }
         faults
@@ -80,7 +86,10 @@ impl SectionKind for BoxSection {
         steps.push(area(whole));
         let inertia = |b: &Symbol, h: &Symbol, bi: &Symbol, hi: &Symbol| {
             let own = |i: Symbol, a: Symbol, c: Symbol, height: &Symbol| i + a * (height.clone() / 2 - c).squared();
-            let mut sum = less_corners(b.clone() * h.cubed() / 12 - bi.clone() * hi.cubed() / 12, outer.then(|| own(IRO, ARO, CRO, h)));
+            let mut sum = less_corners(
+                b.clone() * h.cubed() / 12 - bi.clone() * hi.cubed() / 12,
+                outer.then(|| own(IRO, ARO, CRO, h)),
+            );
             if inner {
                 sum = sum + 4 * own(IRI, ARI, CRI, hi);
             }

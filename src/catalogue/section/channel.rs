@@ -37,21 +37,40 @@ impl SectionKind for Channel {
         let with = |whole: Tree, part: Tree| if fillet { whole + part } else { whole };
         steps.push(area(with(2 * (B * TF) + clear() * TW, 2 * AR)));
         let first = with(H * TW.squared() / 2 + TF * (B.squared() - TW.squared()), 2 * (AR * (TW + CR)));
-        steps.push(step(41, SZ, "First moment of area about the back of the web", Measure::AreaMoment, first, &source::PLANE_FIGURES));
-        steps.push(step(42, ZC, "Distance of the centroid from the back of the web", Measure::Length, SZ / AREA, &source::PLANE_FIGURES));
+        steps.push(step(
+            41,
+            SZ,
+            "First moment of area about the back of the web",
+            Measure::AreaMoment,
+            first,
+            &source::PLANE_FIGURES,
+        ));
+        steps.push(step(
+            42,
+            ZC,
+            "Distance of the centroid from the back of the web",
+            Measure::Length,
+            SZ / AREA,
+            &source::PLANE_FIGURES,
+        ));
         let strong = with(
             B * H.cubed() / 12 - (B - TW.tree()) * clear().cubed() / 12,
             2 * (IR + AR * (H / 2 - TF - CR).squared()),
         );
-        let about_back = with(
-            H * TW.cubed() / 3 + 2 * (TF * (B.cubed() - TW.cubed())) / 3,
-            2 * (IR + AR * (TW + CR).squared()),
-        );
+        let about_back =
+            with(H * TW.cubed() / 3 + 2 * (TF * (B.cubed() - TW.cubed())) / 3, 2 * (IR + AR * (TW + CR).squared()));
         let weak = about_back - AREA * ZC.squared();
         if given.turned {
             let foot = with(TW.tree(), R.into());
             let level = Tree::Max(vec![ZC.into(), foot]);
-            steps.push(step(59, YV, "Level of the largest shear stress above the back of the web", Measure::Length, level, &source::SHEAR_STRESS));
+            steps.push(step(
+                59,
+                YV,
+                "Level of the largest shear stress above the back of the web",
+                Measure::Length,
+                level,
+                &source::SHEAR_STRESS,
+            ));
             steps.extend(ends(Ends {
                 top: B - ZC.tree(),
                 bottom: ZC.into(),

@@ -22,7 +22,12 @@ pub(super) fn has_fillet(given: &Given) -> bool {
 }
 
 /// Faults of web, flange and fillet, for shapes with `flanges` flanges on a web of which `sides` sides carry them.
-pub(super) fn web_and_flange_faults(params: &'static [Param], given: &Given, flanges: f64, sides: f64) -> Vec<(&'static str, String)> {
+pub(super) fn web_and_flange_faults(
+    params: &'static [Param],
+    given: &Given,
+    flanges: f64,
+    sides: f64,
+) -> Vec<(&'static str, String)> {
     let mut faults = positive(params, given);
     if let (Some(h), Some(b), Some(tw), Some(tf)) = (given.get(&H), given.get(&B), given.get(&TW), given.get(&TF)) {
         let r = given.get(&R).unwrap_or(0.0);
@@ -69,7 +74,14 @@ impl SectionKind for ISection {
         if given.turned {
             // Across the web the breadth is the whole depth: the stress peaks in the flanges where the fillets end.
             let level = with(TW / 2, R.into());
-            steps.push(step(59, YV, "Level of the largest shear stress, beside the web", Measure::Length, level, &source::SHEAR_STRESS));
+            steps.push(step(
+                59,
+                YV,
+                "Level of the largest shear stress, beside the web",
+                Measure::Length,
+                level,
+                &source::SHEAR_STRESS,
+            ));
             steps.extend(ends(Ends {
                 top: B / 2,
                 bottom: B / 2,

@@ -158,7 +158,14 @@ mod symbol {
 }
 
 /// A step of a section: its number, what it finds, its formula, where that is published.
-fn step(nn: u16, symbol: Symbol, title: &str, measure: Measure, tree: impl Into<Tree>, source: &'static Source) -> (u16, Definition) {
+fn step(
+    nn: u16,
+    symbol: Symbol,
+    title: &str,
+    measure: Measure,
+    tree: impl Into<Tree>,
+    source: &'static Source,
+) -> (u16, Definition) {
     (nn, Definition::new(symbol, title, measure, tree).from(source))
 }
 
@@ -182,9 +189,30 @@ fn ends(ends: Ends) -> Vec<(u16, Definition)> {
         step(44, BOTTOM, "Distance of the bottom fibre from the centroid", Measure::Length, bottom, source),
         step(50, INERTIA, "Second moment of area about the axis of bending", Measure::Inertia, inertia, source),
         step(51, MINOR_INERTIA, "Second moment of area about the other axis", Measure::Inertia, minor_inertia, source),
-        step(52, RADIUS, "Radius of gyration about the axis of bending", Measure::Length, (INERTIA / AREA).root(), &PLANE_FIGURES),
-        step(53, MINOR_RADIUS, "Radius of gyration about the other axis", Measure::Length, (MINOR_INERTIA / AREA).root(), &PLANE_FIGURES),
-        step(60, SHEAR_MOMENT, "First moment of area beyond the level of the largest shear stress", Measure::AreaMoment, shear_moment, &SHEAR_STRESS),
+        step(
+            52,
+            RADIUS,
+            "Radius of gyration about the axis of bending",
+            Measure::Length,
+            (INERTIA / AREA).root(),
+            &PLANE_FIGURES,
+        ),
+        step(
+            53,
+            MINOR_RADIUS,
+            "Radius of gyration about the other axis",
+            Measure::Length,
+            (MINOR_INERTIA / AREA).root(),
+            &PLANE_FIGURES,
+        ),
+        step(
+            60,
+            SHEAR_MOMENT,
+            "First moment of area beyond the level of the largest shear stress",
+            Measure::AreaMoment,
+            shear_moment,
+            &SHEAR_STRESS,
+        ),
         step(61, SHEAR_WIDTH, "Breadth at that level", Measure::Length, shear_width, &SHEAR_STRESS),
     ]
 }

@@ -40,9 +40,24 @@ impl SectionKind for Plates {
         let all: Vec<[Symbol; 3]> = (0..given.plates.len()).map(plate_symbols).collect();
         let sum = |of: &dyn Fn(&[Symbol; 3]) -> Tree| Tree::sum(all.iter().map(of).collect());
         let mut steps = vec![area(sum(&|[b, h, _]| b.clone() * h.clone()))];
-        steps.push(step(41, SY, "First moment of area about the line from which `at` is measured", Measure::AreaMoment, sum(&|[b, h, y]| b.clone() * h.clone() * y.clone()), &source::PLANE_FIGURES));
-        steps.push(step(42, YC, "Height of the centroid above that line", Measure::Length, SY / AREA, &source::PLANE_FIGURES));
-        let upright = sum(&|[b, h, y]| b.clone() * h.cubed() / 12 + b.clone() * h.clone() * (y.clone() - YC.tree()).squared());
+        steps.push(step(
+            41,
+            SY,
+            "First moment of area about the line from which `at` is measured",
+            Measure::AreaMoment,
+            sum(&|[b, h, y]| b.clone() * h.clone() * y.clone()),
+            &source::PLANE_FIGURES,
+        ));
+        steps.push(step(
+            42,
+            YC,
+            "Height of the centroid above that line",
+            Measure::Length,
+            SY / AREA,
+            &source::PLANE_FIGURES,
+        ));
+        let upright =
+            sum(&|[b, h, y]| b.clone() * h.cubed() / 12 + b.clone() * h.clone() * (y.clone() - YC.tree()).squared());
         let across = sum(&|[b, h, _]| h.clone() * b.cubed() / 12);
         if given.turned {
             turned(given, &all, &mut steps, upright, across);
@@ -137,7 +152,8 @@ fn turned(given: &Given, all: &[[Symbol; 3]], steps: &mut Vec<(u16, Definition)>
     // Just beyond the edge of a narrower plate the breadth drops: the stress can peak there or at the axis.
     let wider = |level: f64| (0..plates.len()).filter(move |at| plates[*at].width / 2.0 > level + 1e-12);
     let stress = |level: f64| {
-        let moment: f64 = wider(level).map(|at| plates[at].height * (plates[at].width.powi(2) / 4.0 - level * level) / 2.0).sum();
+        let moment: f64 =
+            wider(level).map(|at| plates[at].height * (plates[at].width.powi(2) / 4.0 - level * level) / 2.0).sum();
         moment / wider(level).map(|at| plates[at].height).sum::<f64>()
     };
     let mut best = (stress(0.0), None);
@@ -149,7 +165,14 @@ fn turned(given: &Given, all: &[[Symbol; 3]], steps: &mut Vec<(u16, Definition)>
     }
     let level = best.1.map_or(0.0, |at| plates[at].width / 2.0);
     if let Some(at) = best.1 {
-        steps.push(step(59, YV, "Level of the largest shear stress, beside a narrower plate", Measure::Length, all[at][0].clone() / 2, &source::SHEAR_STRESS));
+        steps.push(step(
+            59,
+            YV,
+            "Level of the largest shear stress, beside a narrower plate",
+            Measure::Length,
+            all[at][0].clone() / 2,
+            &source::SHEAR_STRESS,
+        ));
     }
     let chosen: Vec<usize> = wider(level).collect();
     let moment = chosen

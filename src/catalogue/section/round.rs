@@ -43,8 +43,10 @@ impl SectionKind for Round {
 
 /// A full circle about the origin, in chords.
 pub(super) fn circle(radius: f64) -> Vec<[f64; 2]> {
-    let mut points: Vec<[f64; 2]> =
-        [0.0, 90.0, 180.0, 270.0].into_iter().flat_map(|start| quarter([0.0, 0.0], radius, start, start + 90.0).into_iter().skip(1)).collect();
+    let mut points: Vec<[f64; 2]> = [0.0, 90.0, 180.0, 270.0]
+        .into_iter()
+        .flat_map(|start| quarter([0.0, 0.0], radius, start, start + 90.0).into_iter().skip(1))
+        .collect();
     points.rotate_right(1);
     points
 }

@@ -37,8 +37,22 @@ impl SectionKind for Tee {
         let with = |whole: Tree, part: Tree| if fillet { whole + part } else { whole };
         steps.push(area(with(B * TF + stem() * TW, 2 * AR)));
         let first = with(B * TF * (H - TF / 2) + TW * stem().squared() / 2, 2 * (AR * (H - TF.tree() - CR)));
-        steps.push(step(41, SY, "First moment of area about the foot of the web", Measure::AreaMoment, first, &source::PLANE_FIGURES));
-        steps.push(step(42, YC, "Height of the centroid above the foot of the web", Measure::Length, SY / AREA, &source::PLANE_FIGURES));
+        steps.push(step(
+            41,
+            SY,
+            "First moment of area about the foot of the web",
+            Measure::AreaMoment,
+            first,
+            &source::PLANE_FIGURES,
+        ));
+        steps.push(step(
+            42,
+            YC,
+            "Height of the centroid above the foot of the web",
+            Measure::Length,
+            SY / AREA,
+            &source::PLANE_FIGURES,
+        ));
         let about_foot = with(
             (B * H.cubed() - (B - TW.tree()) * stem().cubed()) / 3,
             2 * (IR + AR * (H - TF.tree() - CR).squared()),
@@ -47,7 +61,14 @@ impl SectionKind for Tee {
         let across = with(TF * B.cubed() / 12 + stem() * TW.cubed() / 12, 2 * (IR + AR * (TW / 2 + CR).squared()));
         if given.turned {
             let level = with(TW / 2, R.into());
-            steps.push(step(59, YV, "Level of the largest shear stress, beside the web", Measure::Length, level, &source::SHEAR_STRESS));
+            steps.push(step(
+                59,
+                YV,
+                "Level of the largest shear stress, beside the web",
+                Measure::Length,
+                level,
+                &source::SHEAR_STRESS,
+            ));
             steps.extend(ends(Ends {
                 top: B / 2,
                 bottom: B / 2,
@@ -60,7 +81,14 @@ impl SectionKind for Tee {
         } else {
             let root = if fillet { H - TF.tree() - R } else { stem() };
             let level = Tree::Min(vec![YC.into(), root]);
-            steps.push(step(59, YV, "Level of the largest shear stress above the foot of the web", Measure::Length, level, &source::SHEAR_STRESS));
+            steps.push(step(
+                59,
+                YV,
+                "Level of the largest shear stress above the foot of the web",
+                Measure::Length,
+                level,
+                &source::SHEAR_STRESS,
+            ));
             steps.extend(ends(Ends {
                 top: H - YC.tree(),
                 bottom: YC.into(),

@@ -1,6 +1,7 @@
 //! A section's properties worked on a worksheet, and what has to be written down for it as input.
 use super::{
-    AREA, BOTTOM, Given, INERTIA, MINOR_INERTIA, MINOR_RADIUS, Outline, RADIUS, SHEAR_MOMENT, SHEAR_WIDTH, SectionKind, TOP,
+    AREA, BOTTOM, Given, INERTIA, MINOR_INERTIA, MINOR_RADIUS, Outline, RADIUS, SHEAR_MOMENT, SHEAR_WIDTH, SectionKind,
+    TOP,
 };
 use crate::formula::{Scope, Symbol, Value, Worksheet};
 use crate::units::Measure;
@@ -21,7 +22,13 @@ pub struct Properties {
 }
 
 /// Works a section. `inputs` holds its dimensions under the symbols of [`input_symbols`].
-pub fn work(kind: &dyn SectionKind, given: &Given, inputs: &[(Symbol, Value)], name: &str, sheet: &mut dyn Worksheet) -> Properties {
+pub fn work(
+    kind: &dyn SectionKind,
+    given: &Given,
+    inputs: &[(Symbol, Value)],
+    name: &str,
+    sheet: &mut dyn Worksheet,
+) -> Properties {
     let mut scope = Scope::new(sheet, name, None);
     scope.inherit(inputs);
     for (nn, definition) in kind.steps(given) {
@@ -60,7 +67,9 @@ pub fn input_symbols(kind: &dyn SectionKind, given: &Given) -> Vec<(String, Symb
         .collect();
     for (at, plate) in given.plates.iter().enumerate() {
         let [width, height, place] = plate_symbols(at);
-        for (key, symbol, value) in [("width", width, plate.width), ("height", height, plate.height), ("at", place, plate.at)] {
+        for (key, symbol, value) in
+            [("width", width, plate.width), ("height", height, plate.height), ("at", place, plate.at)]
+        {
             inputs.push((format!("plates.{}.{key}", at + 1), symbol, Measure::Length, value));
         }
     }

@@ -1,38 +1,8 @@
-//! Comparison with limits: every check, worst first.
-use super::{Builder, Cell, words};
-use crate::model::{Display, Model};
-use crate::sheet::{Recording, Results, Table};
+//! Comparison with limits: every check, worst first, and its numbers as text.
+use crate::model::Display;
+use crate::sheet::Results;
 use crate::units::{Measure as M, Printed};
 use crate::work::Check;
-
-/// The table of all checks.
-pub(super) fn tables(model: &Model, results: &Results, sheet: &mut Recording<'_>) -> Vec<Table> {
-    let mut table = Builder::new("checks", "Comparison with limits, highest utilisation first", "check")
-        .words("demand")
-        .words("limit")
-        .column("η", M::Ratio)
-        .words("verdict")
-        .words("step");
-    for check in sorted_checks(results) {
-        let quantity =
-            |si: Option<f64>| si.map_or(String::new(), |si| quantity_text(&model.display, si, check.measure));
-        let step = check.step.clone().filter(|number| sheet.sheet.step(number).is_some());
-        let ratio = match (check.ratio, &step) {
-            (None, _) => words("—"),
-            (Some(_), Some(number)) => sheet.sheet.step(number).map_or(Cell::Empty, |step| Cell::Quantity(step.result)),
-            (Some(ratio), None) => words(ratio_text(ratio, model.display.digits)),
-        };
-        let cells = vec![
-            words(quantity(check.demand)),
-            words(quantity(check.limit)),
-            ratio,
-            words(verdict(check)),
-            step.map_or(words(if check.ratio.is_some() { "table" } else { "" }), Cell::Address),
-        ];
-        table.row(&check.id, cells);
-    }
-    table.build(sheet).into_iter().collect()
-}
 
 /// Checks by falling utilisation, those beyond first, those not checked last; ties in file order.
 #[must_use]
@@ -40,16 +10,6 @@ pub fn sorted_checks(results: &Results) -> Vec<&Check> {
     let mut checks: Vec<&Check> = results.combinations.iter().flat_map(|c| &c.checks).collect();
     checks.sort_by(|a, b| b.ratio.unwrap_or(-1.0).total_cmp(&a.ratio.unwrap_or(-1.0)));
     checks
-}
-
-/// The verdict in words.
-fn verdict(check: &Check) -> String {
-    match (check.ok(), &check.why) {
-        (Some(true), _) => "within".into(),
-        (Some(false), _) => "BEYOND LIMIT".into(),
-        (None, Some(why)) => format!("NOT CHECKED: {why}"),
-        (None, None) => "NOT CHECKED".into(),
-    }
 }
 
 /// A utilisation, rounded up.

@@ -24,7 +24,6 @@ pub(super) fn tables(
 ) -> Vec<Table> {
     let mut tables = input::tables(model, sheet);
     tables.extend(result::tables(model, solution, results, worked, sheet));
-    tables.extend(comparison::tables(model, results, sheet));
     tables
 }
 

@@ -213,7 +213,9 @@ fn push_code(text: &str, place: Place, out: &mut String) {
 /// A line whose beginning cannot be taken for the mark of a block.
 fn guarded(line: &str) -> String {
     let digits = line.bytes().take_while(u8::is_ascii_digit).count();
-    if (1..=9).contains(&digits) && line[digits..].starts_with(['.', ')']) {
+    let after = line[digits..].strip_prefix(['.', ')']);
+    // A list is begun by a number only where a space follows its point.
+    if (1..=9).contains(&digits) && after.is_some_and(|rest| rest.is_empty() || rest.starts_with([' ', '\t'])) {
         return format!("{}\\{}", &line[..digits], &line[digits..]);
     }
     if line.starts_with(['#', '+', '-', '=', '>']) { format!("\\{line}") } else { line.to_string() }
