@@ -1,1 +1,2 @@
 //! The one test binary: published values, promises, diagnostics, packages, commands, tidiness of the house.
+mod markdown;
