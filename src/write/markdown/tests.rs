@@ -132,7 +132,7 @@ fn a_table_has_its_name_before_it_and_no_padding() {
     check(
         &sheet,
         Block::Table("C1.U".into()),
-        "**Table C1.U** Node displacements, combination C1\n\n\
+        "**Table C1.U** Node displacements, combination C1\n\
          | Node | x, mm | r, mrad | from |\n|---|---:|---:|---|\n\
          | B | −1.2 | 0.000 | C1.R |\n| C | | | a \\| b |\n\nStated, then proved.\n",
     );
@@ -161,6 +161,13 @@ fn each_sentence_begins_a_line() {
         paragraph_of("By A. Person, rev. 2. It holds. Does it? 3. Yes (always.) No."),
         "By A. Person, rev. 2.\nIt holds.\nDoes it? 3.\nYes (always.) No.\n",
     );
+}
+
+#[test]
+fn a_sentence_may_end_in_bold() {
+    let bold = Inline::Strong(vec![Inline::Text("Stop.".into())]);
+    let block = Block::Paragraph(vec![bold, Inline::Text(" Then look. Go.".into())]);
+    check(&Sheet::default(), block, "**Stop.**\nThen look.\nGo.\n");
 }
 
 #[test]

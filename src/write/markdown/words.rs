@@ -169,7 +169,7 @@ fn push_text(text: &str, place: Place, dress: Dress, next: Option<char>, out: &m
             if out.ends_with([' ', '\n']) {
                 continue;
             }
-            let begins = plain && place == Place::Running && ends_sentence(&chars[..at]);
+            let begins = plain && place == Place::Running && ends_sentence(&before_here(&chars[..at], out));
             out.push(if begins && after.is_some_and(char::is_uppercase) { '\n' } else { ' ' });
             continue;
         }
@@ -178,6 +178,16 @@ fn push_text(text: &str, place: Place, dress: Dress, next: Option<char>, out: &m
         }
         out.push(c);
     }
+}
+
+/// The last few characters before a place, without the marks of emphasis and code.
+fn before_here(chars: &[char], out: &str) -> Vec<char> {
+    if chars.len() >= 3 {
+        return chars[chars.len() - 3..].to_vec();
+    }
+    let mut last: Vec<char> = out.chars().rev().filter(|c| !"*`".contains(*c)).take(3).collect();
+    last.reverse();
+    last
 }
 
 /// Whether a sentence ends here: not after a single letter, as in `A. Person`.
