@@ -19,10 +19,10 @@ pub(super) fn broken(head: &str, column: usize, formula: &str) -> String {
     let mut used = column + 2;
     while used + (chars.len() - start) > LONGEST {
         let room = LONGEST.saturating_sub(used);
-        let ahead = breaks.iter().filter(|point| point.at > start);
+        let mut ahead = breaks.iter().filter(|point| point.at > start);
         let outermost = ahead.clone().filter(|point| point.at - start <= room).map(|point| point.depth).min();
         let chosen = match outermost {
-            Some(depth) => ahead.filter(|point| point.depth == depth && point.at - start <= room).next_back(),
+            Some(depth) => ahead.rfind(|point| point.depth == depth && point.at - start <= room),
             // Nothing fits: the first place there is.
             None => ahead.clone().next(),
         };
@@ -93,7 +93,7 @@ mod tests {
 
     #[test]
     fn one_long_product_breaks_after_a_factor_and_joins_again() {
-        let formula = vec!["(1234.5678 kN/m²)"; 9].join("·");
+        let formula = ["(1234.5678 kN/m²)"; 9].join("·");
         let text = broken("x", 2, &formula);
         let joined: String = text.lines().map(str::trim).collect();
         assert_eq!(joined, format!("x = {formula}"));
@@ -102,7 +102,7 @@ mod tests {
 
     #[test]
     fn magnitudes_hold_together() {
-        let inside = vec!["(1234.5678 kN·m)"; 4].join(" − ");
+        let inside = ["(1234.5678 kN·m)"; 4].join(" − ");
         let formula = format!("|{inside}| + |{inside}|");
         assert_eq!(broken("x", 2, &formula), format!("x = |{inside}| +\n      |{inside}|"));
     }

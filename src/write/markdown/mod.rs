@@ -34,9 +34,12 @@ fn homes(blocks: &[Block]) -> BTreeMap<&str, &str> {
     let mut here = "";
     for block in blocks {
         match block {
-            Block::Heading { anchor, .. } => {
-                here = anchor;
-                homes.entry(anchor.as_str()).or_insert(here);
+            Block::Heading { anchor, level, .. } => {
+                // Below level 3 the same words recur, and their anchors count: a link must not shift with them.
+                if *level <= 3 {
+                    here = anchor;
+                }
+                homes.entry(anchor.as_str()).or_insert(anchor.as_str());
             }
             Block::Step(name) | Block::Table(name) | Block::Figure(name) => {
                 homes.entry(name.as_str()).or_insert(here);
@@ -74,7 +77,7 @@ impl Writer<'_> {
     fn block(&self, block: &Block) -> String {
         match block {
             Block::Heading { level, text, .. } => {
-                let words = self.words(text, words::Place::Row);
+                let words = self.words(text, words::Place::Line);
                 format!("{} {}\n", "#".repeat((*level).clamp(1, 6).into()), words::heading(&words))
             }
             Block::Paragraph(text) => paragraph(&self.words(text, words::Place::Running)),
@@ -100,7 +103,7 @@ impl Writer<'_> {
             ),
             Block::Grid { head, rows } => {
                 let row = |cells: &[Vec<Inline>]| {
-                    cells.iter().map(|cell| self.words(cell, words::Place::Row)).collect::<Vec<_>>()
+                    cells.iter().map(|cell| self.words(cell, words::Place::Cell)).collect::<Vec<_>>()
                 };
                 let mut text = table::row(&row(head));
                 text.push_str(&table::rule(head.iter().map(|_| false)));
@@ -139,7 +142,7 @@ impl Writer<'_> {
         let mut text = String::new();
         for block in self.blocks {
             if let Block::Heading { level: level @ (2 | 3), text: words, anchor } = block {
-                let words = words::write(words, words::Place::Label, &|_| None);
+                let words = words::write(words, words::Place::Line, &|_| None);
                 let indent = if *level == 2 { "" } else { "  " };
                 text.push_str(&format!("{indent}- [{words}](#{})\n", words::address(anchor)));
             }

@@ -2,9 +2,9 @@
 use super::words;
 use crate::sheet::{Cell, Ledger, Table};
 
-/// A table of the sheet.
+/// A table of the sheet. Its name stands on the line directly before its head, which a table may interrupt.
 pub(super) fn write(table: &Table, ledger: &Ledger) -> String {
-    let mut text = format!("**Table {}** {}\n\n", table.id, words::escaped(&table.title));
+    let mut text = format!("**Table {}** {}\n", table.id, words::escaped(&table.title));
     let heads = std::iter::once(table.head.clone()).chain(table.columns.iter().map(crate::sheet::Column::heading));
     text.push_str(&row(&heads.map(|head| words::escaped(&head)).collect::<Vec<_>>()));
     text.push_str(&rule(std::iter::once(false).chain((0..table.columns.len()).map(|at| is_numeric(table, at)))));

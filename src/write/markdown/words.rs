@@ -7,10 +7,10 @@ use crate::document::Inline;
 pub(super) enum Place {
     /// In a paragraph: each sentence begins a line.
     Running,
-    /// In a heading or a cell: one line.
-    Row,
-    /// In the words of a link.
-    Label,
+    /// In a heading or the words of a link: one line.
+    Line,
+    /// In the cell of a table: one line, and a bar ends it.
+    Cell,
 }
 
 /// Writes runs of text. `home` gives the anchor of the heading to which a link leads.
@@ -18,7 +18,7 @@ pub(super) fn write<'h>(inlines: &[Inline], place: Place, home: &dyn Fn(&str) ->
     let mut out = String::new();
     run(inlines, place, Dress::default(), home, None, &mut out);
     // A break at the end breaks nothing.
-    while let Some(kept) = out.strip_suffix("\\\n") {
+    while let Some(kept) = out.trim_end_matches(' ').strip_suffix("\\\n") {
         out.truncate(kept.len());
     }
     let lines: Vec<String> = out.split('\n').map(|line| guarded(line.trim())).collect();
@@ -27,17 +27,19 @@ pub(super) fn write<'h>(inlines: &[Inline], place: Place, home: &dyn Fn(&str) ->
 
 /// A text of which every character means itself, on one line.
 pub(super) fn escaped(text: &str) -> String {
-    write(&[Inline::Text(text.to_string())], Place::Row, &|_| None)
+    write(&[Inline::Text(text.to_string())], Place::Line, &|_| None)
 }
 
 /// Words of a heading: hashes at its end would be taken for its close.
 pub(super) fn heading(words: &str) -> String {
     let kept = words.trim_end_matches('#');
-    if kept.len() == words.len() {
-        words.to_string()
-    } else {
-        format!("{kept}{}", "\\#".repeat(words.len() - kept.len()))
+    let hashes = words.len() - kept.len();
+    if hashes == 0 {
+        return words.to_string();
     }
+    // One that is escaped already stays so.
+    let kept = kept.strip_suffix('\\').filter(|bare| !bare.ends_with('\\')).unwrap_or(kept);
+    format!("{kept}{}", "\\#".repeat(hashes))
 }
 
 /// A path or an anchor as it may stand in a link.
@@ -71,7 +73,7 @@ fn run<'h>(
     out: &mut String,
 ) {
     for (at, inline) in inlines.iter().enumerate() {
-        let next = inlines.get(at + 1).map_or(after, first_char);
+        let next = inlines[at + 1..].iter().find_map(first_char).or(after);
         match inline {
             Inline::Text(text) => push_text(text, place, dress, next, out),
             Inline::Strong(inner) if !dress.strong => {
@@ -88,11 +90,14 @@ fn run<'h>(
                 Some(anchor) => {
                     let dress = Dress { link: true, ..dress };
                     out.push('[');
-                    run(text, Place::Label, dress, home, Some(']'), out);
+                    let place = if place == Place::Cell { place } else { Place::Line };
+                    run(text, place, dress, home, Some(']'), out);
                     out.push_str(&format!("](#{})", address(anchor)));
                 }
                 None => run(text, place, dress, home, next, out),
             },
+            // Within other runs a break would part the marks from their words.
+            Inline::Break if dress.strong || dress.emphasis || dress.link => out.push(' '),
             Inline::Break if place == Place::Running => {
                 let kept = out.trim_end_matches(' ').len();
                 out.truncate(kept);
@@ -101,7 +106,7 @@ fn run<'h>(
                     out.push_str("\\\n");
                 }
             }
-            Inline::Break => out.push_str(if place == Place::Row { "<br>" } else { " " }),
+            Inline::Break => out.push_str(if place == Place::Cell { "<br>" } else { " " }),
         }
     }
 }
@@ -132,7 +137,11 @@ fn marked<'h>(
     let nested = dress.strong && dress.emphasis;
     let apart = !nested || (before == Some(' ') && next == Some(' '));
     out.push_str(lead);
-    if opens && closes && apart && !bare.is_empty() && !bare.contains("\\\n") {
+    // Backticks of two runs of code must not touch.
+    if out.ends_with('`') && bare.starts_with('`') {
+        out.push(' ');
+    }
+    if opens && closes && apart && !bare.is_empty() {
         out.push_str(&format!("{mark}{bare}{mark}"));
     } else {
         out.push_str(bare);
@@ -143,7 +152,7 @@ fn marked<'h>(
 fn first_char(inline: &Inline) -> Option<char> {
     match inline {
         Inline::Text(text) => text.chars().next(),
-        Inline::Code(_) => Some('`'),
+        Inline::Code(text) => (!text.trim().is_empty()).then_some('`'),
         Inline::Strong(_) | Inline::Emphasis(_) => Some('*'),
         Inline::Link { .. } => Some('['),
         Inline::Break => Some(' '),
@@ -160,7 +169,7 @@ fn push_text(text: &str, place: Place, dress: Dress, next: Option<char>, out: &m
             if out.ends_with([' ', '\n']) {
                 continue;
             }
-            let begins = plain && place == Place::Running && ends_sentence(&chars[..at]);
+            let begins = plain && place == Place::Running && ends_sentence(&before_here(&chars[..at], out));
             out.push(if begins && after.is_some_and(char::is_uppercase) { '\n' } else { ' ' });
             continue;
         }
@@ -171,10 +180,21 @@ fn push_text(text: &str, place: Place, dress: Dress, next: Option<char>, out: &m
     }
 }
 
+/// The last few characters before a place, without the marks of emphasis and code.
+fn before_here(chars: &[char], out: &str) -> Vec<char> {
+    if chars.len() >= 3 {
+        return chars[chars.len() - 3..].to_vec();
+    }
+    let mut last: Vec<char> = out.chars().rev().filter(|c| !"*`".contains(*c)).take(3).collect();
+    last.reverse();
+    last
+}
+
 /// Whether a sentence ends here: not after a single letter, as in `A. Person`.
 fn ends_sentence(before: &[char]) -> bool {
     match before {
-        [.., two, one, '.'] => one.is_alphanumeric() && !(one.is_uppercase() && !two.is_alphanumeric()) || *one == ')',
+        [.., _, ')', '.'] => true,
+        [.., two, one, '.'] => one.is_alphanumeric() && (two.is_alphanumeric() || !one.is_uppercase()),
         [.., '?' | '!'] => true,
         _ => false,
     }
@@ -199,7 +219,7 @@ fn push_code(text: &str, place: Place, out: &mut String) {
         return;
     }
     // A bar ends the cell of a table even in code.
-    let text = if place == Place::Row { text.replace('|', "\\|") } else { text };
+    let text = if place == Place::Cell { text.replace('|', "\\|") } else { text };
     let fence = "`".repeat(longest_run(&text) + 1);
     let padded = text.starts_with('`') || text.ends_with('`') || (text.starts_with(' ') && text.ends_with(' '));
     let pad = if padded { " " } else { "" };
@@ -213,9 +233,9 @@ fn push_code(text: &str, place: Place, out: &mut String) {
 /// A line whose beginning cannot be taken for the mark of a block.
 fn guarded(line: &str) -> String {
     let digits = line.bytes().take_while(u8::is_ascii_digit).count();
-    let after = line[digits..].strip_prefix(['.', ')']);
-    // A list is begun by a number only where a space follows its point.
-    if (1..=9).contains(&digits) && after.is_some_and(|rest| rest.is_empty() || rest.starts_with([' ', '\t'])) {
+    let mut after = line[digits..].chars();
+    let marked = matches!(after.next(), Some('.' | ')')) && after.next().is_none_or(char::is_whitespace);
+    if (1..=9).contains(&digits) && marked {
         return format!("{}\\{}", &line[..digits], &line[digits..]);
     }
     if line.starts_with(['#', '+', '-', '=', '>']) { format!("\\{line}") } else { line.to_string() }
