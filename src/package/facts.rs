@@ -67,7 +67,7 @@ pub fn facts(
             })
             .collect(),
         member_sheets: member_sheets(model, results, sheet, &steps),
-        second_answers: Vec::new(),
+        second_answers: second_answers(model, results, sheet, &steps),
         sample: comparisons::sample(results, sheet, origin.sha256),
         left_out: solution
             .left_out
@@ -319,7 +319,7 @@ fn node_sheets(model: &Model, steps: &Index) -> Vec<NodeSheet> {
     let mut sheets = Vec::new();
     for node in &model.nodes {
         for combination in &model.combinations {
-            let groups = steps.groups(&[("", &node.name, Some(&combination.name), 'N', 0..100)]);
+            let groups = steps.groups(&[("", &node.name, Some(&combination.name), 'N', 0..90)]);
             if !groups.is_empty() {
                 sheets.push(NodeSheet { node: node.name.clone(), combination: combination.name.clone(), groups });
             }
@@ -344,7 +344,7 @@ fn member_sheets(model: &Model, results: &Results, sheet: &Sheet, steps: &Index)
                 ("Strain", name, Some(combination), 'E', 0..1000),
                 ("Stress at the ends", name, Some(combination), 'S', 0..10),
                 ("End forces", name, Some(combination), 'F', 0..1000),
-                ("Extremes between the ends", name, Some(combination), 'X', 0..1000),
+                ("Extremes between the ends", name, Some(combination), 'X', 0..60),
                 ("Shear stress", name, Some(combination), 'S', 10..1000),
                 ("Comparison with limits", name, Some(combination), 'C', 0..80),
             ];
@@ -371,4 +371,56 @@ fn member_sheets(model: &Model, results: &Results, sheet: &Sheet, steps: &Index)
         });
     }
     sheets
+}
+
+/// Second answers by another theory.
+fn second_answers(model: &Model, results: &Results, sheet: &Sheet, steps: &Index) -> Vec<Group> {
+    let mut groups = Vec::new();
+    for combination in &model.combinations {
+        groups.push(Group {
+            title: format!("Work and energy, combination {}", combination.name),
+            text: "Work of the loads comes from movements, energy from section forces: a wrong stiffness shows here."
+                .into(),
+            tables: tables(sheet, &[&format!("{}.W", combination.name)]),
+            steps: steps.find("structure", Some(&combination.name), 'R', 31..32),
+            ..Group::default()
+        });
+    }
+    for (at, member) in model.members.iter().enumerate() {
+        for (c, combination) in model.combinations.iter().enumerate() {
+            if results.governing[at] != c && results.deflecting[at] != Some(c) {
+                continue;
+            }
+            groups.extend(steps.groups(&[
+                (
+                    &format!("Order of magnitude of the moment, {}, {}", member.name, combination.name),
+                    &member.name,
+                    Some(&combination.name),
+                    'X',
+                    61..70,
+                ),
+                (
+                    &format!("Deflection again by unit load, {}, {}", member.name, combination.name),
+                    &member.name,
+                    Some(&combination.name),
+                    'X',
+                    71..80,
+                ),
+            ]));
+        }
+    }
+    for again in &results.virtual_work {
+        let (node, combination) = (&model.nodes[again.node].name, &model.combinations[again.combination].name);
+        let word = ["x", "y", "r"][again.direction];
+        let nn = again.direction as u16;
+        let mut of_node = steps.find(node, Some(combination), 'N', 91 + nn..92 + nn);
+        of_node.extend(steps.find(node, Some(combination), 'N', 94 + nn..95 + nn));
+        groups.push(Group {
+            title: format!("Movement of node {node} in {word} again by virtual work, {combination}"),
+            tables: tables(sheet, &[&format!("{combination}.K.{node}.{word}")]),
+            steps: of_node,
+            ..Group::default()
+        });
+    }
+    groups
 }

@@ -2,11 +2,12 @@
 use super::{Recording, Sheet, chapter, digits};
 use crate::analysis::Solution;
 use crate::formula::{Silent, Value, Worksheet};
-use crate::model::{Detail, Model};
+use crate::model::{DeflectionCheck, Detail, Model};
 use crate::units::Measure;
 use crate::work::{
-    CombinationWork, MemberForces, NodeBalance, Prepared, largest_axial, node_movement, prepare, work_all,
-    work_case_total, work_member_checks, work_node, work_node_checks, work_one, work_stability_check, work_whole,
+    self, Check, CombinationWork, Energy, MemberForces, NodeBalance, Prepared, largest_axial, node_movement, prepare,
+    work_all, work_case_total, work_member_checks, work_node, work_node_checks, work_one, work_stability_check,
+    work_whole,
 };
 
 /// Results of the whole structure, worked silently.
@@ -18,6 +19,27 @@ pub struct Results {
     pub combinations: Vec<CombinationWork>,
     /// The combination that governs each member.
     pub governing: Vec<usize>,
+    /// The combination of each member's largest deflection against its limit, where that is checked.
+    pub deflecting: Vec<Option<usize>>,
+    /// Energy of each combination.
+    pub energy: Vec<Energy>,
+    /// Checked movements of nodes again by virtual work.
+    pub virtual_work: Vec<VirtualMovement>,
+}
+
+/// A node's movement by virtual work, in the combination where it is largest against its limit.
+#[derive(Debug, Clone, Default)]
+pub struct VirtualMovement {
+    /// The node.
+    pub node: usize,
+    /// 0 for x, 1 for y, 2 for rotation.
+    pub direction: usize,
+    /// The combination.
+    pub combination: usize,
+    /// Each member's share, m or rad.
+    pub shares: Vec<f64>,
+    /// Share of supports that settle or give, m or rad.
+    pub supports: f64,
 }
 
 /// Works every result of a solved structure.
@@ -27,7 +49,43 @@ pub fn results(model: &Model, solution: &Solution) -> Results {
     let prepared = prepare(&mut silent, model);
     let combinations = work_all(&mut silent, model, &prepared, solution);
     let governing = (0..model.members.len()).map(|at| governing(model, &combinations, at)).collect();
-    Results { prepared, combinations, governing }
+    let worst = |wanted: &dyn Fn(&Check) -> bool| {
+        let ratio =
+            |work: &CombinationWork| work.checks.iter().filter(|c| wanted(c)).filter_map(|c| c.ratio).reduce(f64::max);
+        let rated: Vec<(usize, f64)> =
+            combinations.iter().enumerate().filter_map(|(at, work)| ratio(work).map(|r| (at, r))).collect();
+        rated
+            .iter()
+            .copied()
+            .reduce(|best, next| if next.1 > best.1 * (1.0 + 1e-9) { next } else { best })
+            .map(|(at, _)| at)
+    };
+    let deflecting = model.members.iter().map(|m| worst(&|c| c.kind == "deflection" && c.subject == m.name)).collect();
+    let energy = model
+        .combinations
+        .iter()
+        .zip(&solution.combinations)
+        .zip(&combinations)
+        .map(|((combination, solved), work)| {
+            work::energy(model, &prepared, combination, solved, (&work.forces, &work.extremes, &work.nodes))
+        })
+        .collect();
+    let mut virtual_work = Vec::new();
+    for check in &model.checks.deflection {
+        let DeflectionCheck::Node { node, direction, .. } = check else { continue };
+        let kind = format!("deflection.{}", ["x", "y", "r"][*direction]);
+        let Some(combination) = worst(&|c| c.kind == kind && c.subject == model.nodes[*node].name) else { continue };
+        if solution.combinations[combination].members.iter().any(|m| m.slack) {
+            continue;
+        }
+        let Some((forces, extremes)) = work::unit_response(model, &prepared, *node, *direction) else { continue };
+        let work = &combinations[combination];
+        let real = (work.forces.as_slice(), work.extremes.as_slice());
+        let shares = work::virtual_work(&prepared, model, &model.combinations[combination], real, (&forces, &extremes));
+        let supports = work::support_share(model, &solution.combinations[combination], &forces, *node, *direction);
+        virtual_work.push(VirtualMovement { node: *node, direction: *direction, combination, shares, supports });
+    }
+    Results { prepared, combinations, governing, deflecting, energy, virtual_work }
 }
 
 /// The combination with the member's largest utilisation; without any, with its largest stress or force.
@@ -68,7 +126,9 @@ fn governing(model: &Model, combinations: &[CombinationWork], member: usize) -> 
 pub fn is_worked(model: &Model, results: &Results, member: usize, combination: usize) -> bool {
     match model.display.detail {
         Detail::Full => true,
-        Detail::Governing => results.governing[member] == combination,
+        Detail::Governing => {
+            results.governing[member] == combination || results.deflecting[member] == Some(combination)
+        }
         Detail::Summary => false,
     }
 }
@@ -108,6 +168,11 @@ pub fn compose(model: &Model, solution: &Solution, results: &Results) -> Sheet {
                     &extremes,
                     largest,
                 );
+                let loads = work::factored(&mut recording, model, combination, &prepared.loads[member_at]);
+                work::work_bound(&mut recording, member, combination, &loads, &member_forces, &extremes);
+                if results.deflecting[member_at] == Some(at) {
+                    work::work_unit_load(&mut recording, member, combination, &loads, &member_forces, &extremes);
+                }
                 forces.push(member_forces);
                 all_extremes[member_at] = extremes;
             } else {
@@ -131,6 +196,18 @@ pub fn compose(model: &Model, solution: &Solution, results: &Results) -> Sheet {
             node_movement(sheet, model, combination, solved, node)
         });
         work_stability_check(&mut recording, model, combination, solved.critical.as_ref().map(|c| c.factor));
+        work::work_energy(&mut recording, &combination.name, &results.energy[at]);
+        for again in results.virtual_work.iter().filter(|again| again.combination == at) {
+            let moved = node_movement(&mut recording, model, combination, solved, again.node)[again.direction];
+            work::work_virtual(
+                &mut recording,
+                model,
+                combination,
+                (again.node, again.direction),
+                (again.shares.as_slice(), again.supports),
+                moved,
+            );
+        }
         worked.push(CombinationWork { forces, extremes: all_extremes, nodes, balance, checks: silent.checks.clone() });
     }
     for table in chapter::tables(model, solution, results, &worked, &mut recording) {

@@ -90,13 +90,16 @@ fn print(sheet: &mut Sheet, owed: &[i32], place: &[i32]) {
     for step in &sheet.steps {
         let id = step.result as usize;
         let found = from_print(step, &sheet.ledger);
+        // Zero that follows from plain inputs or from zeros alone needs no decimals to say how small it is.
+        let plain = step.operands.iter().all(|(_, operand)| sheet.ledger.entry(*operand).rule == Rule::Typed)
+            || sheet.ledger.entry(step.result).size == 0.0;
         let entry = sheet.ledger.entry_mut(step.result);
         let value = entry.in_unit();
         let is_zero = entry.value.abs() <= DUST * entry.size;
         entry.printed = if entry.rule == Rule::Up {
             Printed::up(found, place[id])
         } else if is_zero {
-            zero(found, owed[id], place[id])
+            if found == 0.0 && plain { Printed { count: 0, place: 0 } } else { zero(found, owed[id], place[id]) }
         } else if says_exactly(value, owed[id]) && (found - value).abs() <= SLACK * 10f64.powi(owed[id]) {
             trimmed(value, owed[id])
         } else {
@@ -125,7 +128,7 @@ fn closing(value: f64, found: f64, place: i32) -> Printed {
 /// Zero, printed to the finest place at which the line closes: numerical dust is no number.
 fn zero(found: f64, owed: i32, place: i32) -> Printed {
     let finest = (place..=owed).find(|place| found.abs() <= SLACK * 10f64.powi(*place)).unwrap_or(owed);
-    if found == 0.0 { Printed { count: 0, place: 0 } } else { closing(0.0, found, finest) }
+    if found == 0.0 { Printed { count: 0, place: owed } } else { closing(0.0, found, finest) }
 }
 
 /// What the printed operands of a step give, in the unit of its result.

@@ -46,6 +46,8 @@ pub struct Extremes {
     pub moment: Option<Extreme>,
     pub shear: Option<Extreme>,
     pub deflection: Option<Extreme>,
+    /// Place of the largest deflection, as an operand.
+    pub deflection_place: Option<Value>,
     pub tension: Option<Extreme>,
     pub compression: Option<Extreme>,
     /// Smallest axial force: the largest compression.
@@ -74,6 +76,7 @@ struct Seeker<'w, 'a> {
     forces: &'a MemberForces,
     /// Places already worked: symbol and distance.
     places: Vec<(Symbol, f64)>,
+    deflection_place: Option<Value>,
 }
 
 /// Finds and works every extreme of a member.
@@ -104,12 +107,14 @@ pub fn work_extremes(
     let written: Vec<(Option<Value>, Local)> = carried.iter().map(|(factor, _, local)| (*factor, *local)).collect();
     let between = Between::new(&mut scope, &written);
     let names = (member.name.as_str(), combination.name.as_str());
-    let mut seeker = Seeker { scope, names, length, between, field, loads, forces, places: Vec::new() };
+    let mut seeker =
+        Seeker { scope, names, length, between, field, loads, forces, places: Vec::new(), deflection_place: None };
     let mut out = Extremes::default();
     if matches!(member.kind, MemberKind::Beam | MemberKind::Frame) {
         out.moment = Some(seeker.moment());
         out.shear = Some(seeker.shear());
         out.deflection = Some(seeker.deflection());
+        out.deflection_place = seeker.deflection_place;
     }
     if forces.n[0].is_some() {
         out.least_axial = Some(seeker.axial());
@@ -215,6 +220,7 @@ impl Seeker<'_, '_> {
             return Extreme { x: 0.0, value: Value::silent(0.0), fibre: Fibre::Top };
         }
         let at = self.place(&Symbol::new("x_v"), &peak, base::DEFLECTION, false);
+        self.deflection_place = self.scope.get(&at.symbol);
         let slope = self.field.at_slope(at.x);
         if slope {
             let definition = self.between.slope(&at, &Symbol::new("θ_x"));

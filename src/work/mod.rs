@@ -9,7 +9,9 @@ mod loads;
 mod member;
 mod movement;
 mod node;
+mod second;
 mod structure;
+mod unit;
 mod whole;
 
 pub use all::{
@@ -23,5 +25,9 @@ pub use loads::{CaseLoad, load_inputs, work_case_loads};
 pub use member::{MemberBase, SectionValues, work_base};
 pub use movement::movements;
 pub use node::{AllLoads, NodeBalance, node_load, work_node};
+pub use second::{
+    Energy, SUPPORTS, energy, support_share, virtual_work, work_bound, work_energy, work_unit_load, work_virtual,
+};
 pub use structure::{loadings, solve, structure};
+pub use unit::unit_response;
 pub use whole::{Balance, WHOLE, work_case_total, work_whole};

@@ -3,7 +3,7 @@ use super::{Builder, Cell, quantity, words};
 use crate::analysis::Solution;
 use crate::formula::{Value, Worksheet};
 use crate::model::{MemberKind, Model};
-use crate::sheet::{Recording, Results, Table, is_worked};
+use crate::sheet::{Recording, Results, Table, VirtualMovement, is_worked};
 use crate::units::Measure as M;
 use crate::work::{CombinationWork, node_movement};
 
@@ -25,6 +25,10 @@ pub(super) fn tables(
         tables.push(places(model, at, sheet));
         tables.push(critical(model, solution, at, sheet));
         tables.push(audit(model, at, work, sheet));
+        tables.push(energy(model, results, at, sheet));
+        for again in results.virtual_work.iter().filter(|again| again.combination == at) {
+            tables.push(shares(model, again, sheet));
+        }
     }
     tables.into_iter().flatten().collect()
 }
@@ -212,5 +216,40 @@ fn audit(model: &Model, at: usize, work: &CombinationWork, sheet: &mut Recording
     row("asked", work.balance.asked);
     row("returned", work.balance.returned);
     row("left over", work.balance.left_over);
+    table.build(sheet)
+}
+
+fn energy(model: &Model, results: &Results, at: usize, sheet: &mut Recording<'_>) -> Option<Table> {
+    let name = &model.combinations[at].name;
+    let mut table = Builder::new(format!("{name}.W"), format!("Work and energy, combination {name}"), "part").column("E", M::Energy).note(
+        "External: half of loads and reactions times movements. Strain: half of ∫(N²/EA + M²/EI). Free: half of the work on warming and lack of fit.",
+    );
+    let [external, strain, free, _] = crate::work::work_energy(sheet, name, &results.energy[at]);
+    for (word, value) in [("external", external), ("strain", strain), ("free", free)] {
+        table.row(word, vec![Cell::Quantity(value.id)]);
+    }
+    table.build(sheet)
+}
+
+fn shares(model: &Model, again: &VirtualMovement, sheet: &mut Recording<'_>) -> Option<Table> {
+    let combination = &model.combinations[again.combination].name;
+    let node = &model.nodes[again.node].name;
+    let word = ["x", "y", "r"][again.direction];
+    let measure = if again.direction == 2 { M::Rotation } else { M::Length };
+    let id = format!("{combination}.K.{node}.{word}");
+    let title =
+        format!("Movement of node {node} in {word} by virtual work, combination {combination}: share of each member");
+    let mut table = Builder::new(id, title, "member").column("w", measure).note(
+        "∫(N·n/EA + M·m/EI) with n and m from a unit force at the node; N and M are those of the end forces and loads.",
+    );
+    for (member, share) in model.members.iter().zip(&again.shares) {
+        let value =
+            sheet.stated(format_args!("{combination}.K.{node}.{word}.{}.w", member.name), *share, *share, measure);
+        table.row(&member.name, vec![Cell::Quantity(value.id)]);
+    }
+    let address = format!("{combination}.K.{node}.{word}.{}.w", crate::work::SUPPORTS);
+    if let Some(value) = sheet.sheet.ledger.at(&address) {
+        table.row(crate::work::SUPPORTS, vec![Cell::Quantity(value.id)]);
+    }
     table.build(sheet)
 }
