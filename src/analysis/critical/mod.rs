@@ -21,10 +21,13 @@ use part::{Loaded, Part};
 const DUST: [f64; 2] = [1e-9, 1e-10];
 /// Strain at which the search begins where no compressed member can bow.
 const STRAIN: f64 = 1e-4;
+/// Strain beyond which small movements say nothing any more: a structure of bars that cannot bow would be squashed
+/// before it buckles.
+const LIMIT: f64 = 0.05;
 /// How far the search goes either way; a factor further down is 0.
 const RANGE: f64 = 1e9;
 /// Width of the bracket round the factor at which the search ends.
-const CLOSE: f64 = 1e-10;
+const CLOSE: f64 = 1e-8;
 
 /// The smallest factor on all axial forces of a combination at which the structure buckles in its plane.
 ///
@@ -76,11 +79,12 @@ pub fn critical_load(
             factor = finer + (finer - high) / 3.0;
         }
     }
-    let without_inertia = compressed
-        .iter()
-        .map(|(member, _)| *member)
-        .filter(|member| structure.members[*member].bending_rigidity.is_none_or(|bending| bending <= 0.0))
-        .collect();
+    let bows = |member: usize| structure.members[member].bending_rigidity.is_some_and(|bending| bending > 0.0);
+    let without_inertia: Vec<usize> = compressed.iter().map(|(m, _)| *m).filter(|member| !bows(*member)).collect();
+    let strain = |member: &usize| factor * forces[*member].compression() / structure.members[*member].axial_rigidity;
+    if without_inertia.len() == compressed.len() && without_inertia.iter().map(strain).fold(0.0, f64::max) > LIMIT {
+        return Ok(None);
+    }
     let mode = mode::shape(&stability, if low > 0.0 { low } else { high });
     Ok(Some(CriticalLoad { factor, mode, without_inertia }))
 }
