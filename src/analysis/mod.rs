@@ -1,4 +1,5 @@
 //! Equation numbers, assembly, solution, diagnosis of mechanisms, residuals, critical load. Only user of nalgebra.
+mod critical;
 mod failure;
 mod freedom;
 mod mechanism;
@@ -14,6 +15,7 @@ mod tension_only;
 mod tests;
 mod twofold;
 
+pub use critical::critical_load;
 pub use failure::{Failure, Names};
 pub use mechanism::{Motion, describe};
 pub use solution::{CombinationSolution, CriticalLoad, LeftOut, MemberMovement, Solution};

@@ -176,3 +176,51 @@ fn told_in_the_users_names() {
     let text = describe(&Motion::Turns { nodes: vec![0, 2], about: [3.0, 1.5], whole: false }, &names);
     assert!(text.starts_with("nodes `A` and `C` can turn about the point x = 3 m, y = 1.5 m"), "{text}");
 }
+
+/// A stiff bar that only a spring 10¹⁴ times softer keeps from sliding: no mechanism, but no digits either.
+#[test]
+fn a_spring_far_too_soft() {
+    let job = Job::new(&[[0.0, 0.0], [1.0, 0.0]]).support(0, ROLLER);
+    let job = job.spring(1, ROLLER, [Some(1e-5), None, None]).bar(0, 1, 1e9).load(0, [1.0, 0.0, 0.0]);
+    let failure = job.try_solve().expect_err("no digits left");
+    assert!(matches!(failure, Failure::Untrustworthy { condition } if condition > 1e12), "{failure:?}");
+}
+
+/// Numbers that do not fit are refused, not indexed with.
+#[test]
+fn numbers_that_do_not_fit() {
+    let sound = || Job::new(&[[0.0, 0.0], [4.0, 0.0]]).support(0, FIXED).frame(0, 1, 1e9, 1e6);
+    let mut jobs = vec![sound(); 6];
+    jobs[0].structure.members[0].to = 7;
+    jobs[1].structure.members[0].stiffness.pop();
+    jobs[2].structure.nodes[1] = [0.0, 0.0];
+    jobs[3].loading.nodes.pop();
+    jobs[4].loading.settlements.push((1, [0.0, 1.0, 0.0]));
+    jobs[5].loading.nodes[1][0] = f64::NAN;
+    for job in jobs {
+        let failure = job.try_solve().expect_err("does not fit");
+        assert!(matches!(failure, Failure::Inconsistent { .. }), "{failure:?}");
+    }
+}
+
+#[test]
+fn failures_in_the_users_names() {
+    let nodes = ["A", "B"].map(String::from);
+    let members = ["AB", "BC"].map(String::from);
+    let combinations = ["C1"].map(String::from);
+    let names = Names { nodes: &nodes, members: &members, combinations: &combinations };
+    let failure = Failure::LoadedFreeDirection {
+        combination: 0,
+        node: 1,
+        direction: Some([0.0, 1.0]),
+        load: -1250.0,
+        slack: vec![1],
+    };
+    let text = failure.describe(&names).remove(0);
+    let expected = "node `B` is free to move vertically: nothing there resists it, and combination `C1` loads it with \
+                    -1250 N, with `BC` slack.";
+    assert!(text.starts_with(expected), "{text}");
+    let motions = vec![Motion::MemberSpins { member: 1, about: 0 }];
+    let failure = Failure::Mechanism { motions, combination: None, slack: Vec::new() };
+    assert!(failure.describe(&names)[0].starts_with("member `BC` can turn freely about node `A`"));
+}

@@ -1,5 +1,6 @@
 //! Tests of the solver against closed forms and laws.
 mod bracing;
+mod buckling;
 mod frames;
 mod job;
 mod laws;
