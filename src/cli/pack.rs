@@ -113,13 +113,13 @@ impl Pack {
 /// What matters of a package in a few lines.
 fn report(folder: &Path, stem: &str, solved: &package::Solved, beyond: usize) {
     let checks = crate::sheet::sorted_checks(&solved.results);
-    let unchecked = checks.iter().filter(|check| check.ratio.is_none()).count();
+    let unchecked = checks.iter().filter(|check| check.ok().is_none()).count();
     let within = checks.len() - unchecked - beyond;
     say(&format!(
         "{}: {within} checks within their limits, {beyond} beyond, {unchecked} not checked",
         folder.join(stem).display()
     ));
-    if let Some(worst) = checks.first()
+    if let Some(worst) = checks.first().filter(|worst| worst.ok().is_some())
         && let Some(ratio) = worst.ratio
     {
         say(&format!(

@@ -15,7 +15,7 @@ pub(super) fn facts(model: &Model, results: &Results, sheet: &Sheet) -> CheckFac
     let kinds: Vec<String> =
         kinds.iter().filter(|kind| asked_for(model, kind)).map(|kind| (*kind).to_owned()).collect();
     CheckFacts {
-        governing: rows.first().filter(|row| !row.ratio.is_empty()).cloned(),
+        governing: rows.first().filter(|row| row.verdict != "NOT CHECKED").cloned(),
         within: count(Some(true)),
         beyond: count(Some(false)),
         not_checked: count(None),
@@ -87,7 +87,7 @@ fn matrix(model: &Model, checks: &[&Check], kinds: &[String]) -> Vec<MatrixRow> 
                 if of.is_empty() {
                     return why_not(kind).to_owned();
                 }
-                let unchecked = of.iter().filter(|c| c.ratio.is_none()).count();
+                let unchecked = of.iter().filter(|c| c.ok().is_none()).count();
                 let worst = of.iter().filter_map(|c| c.ratio).fold(f64::NEG_INFINITY, f64::max);
                 let mut text = if worst.is_finite() {
                     format!("{} {}", ratio_text(worst, 3), if worst > 1.0 { "BEYOND LIMIT" } else { "within" })

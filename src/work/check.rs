@@ -29,17 +29,19 @@ pub struct Check {
     pub ratio: Option<f64>,
     /// Place of the demand along the member, m.
     pub place: Option<f64>,
-    /// Why it was not checked.
+    /// Whether the ratio tells only part of the check, such as buckling in the plane alone.
+    pub partial: bool,
+    /// Why it was not checked, or not wholly.
     pub why: Option<String>,
     /// The step that compares, where it was worked.
     pub step: Option<String>,
 }
 
 impl Check {
-    /// Whether it keeps its limit; `None` where it was not checked.
+    /// Whether it keeps its limit; `None` where it was not checked, or only in part and that part keeps it.
     #[must_use]
     pub fn ok(&self) -> Option<bool> {
-        self.ratio.map(|ratio| ratio <= 1.0)
+        self.ratio.map(|ratio| ratio <= 1.0).filter(|ok| !(*ok && self.partial))
     }
 }
 
@@ -68,6 +70,7 @@ impl Bench<'_, '_> {
             measure,
             ratio: None,
             place: None,
+            partial: false,
             why: None,
             step: None,
         }
@@ -293,12 +296,13 @@ impl Bench<'_, '_> {
             row.step = self.number(36);
         } else {
             row.limit = Some(self.scope.work('C', 35, &euler::ALLOWED_IN).si);
-            self.compare(36, &euler::UTILISATION);
-            self.scope.sheet().remark(None, Some("In the plane alone: NOT CHECKED out of the plane."));
+            row.ratio = Some(self.compare(36, &euler::UTILISATION_IN));
+            row.step = self.number(36);
+            row.partial = true;
             row.why = Some(if self.scope.get(&check::L_OUT).is_none() {
-                "no effective length out of the plane is given; the limit shown is that in the plane alone".into()
+                "NOT CHECKED out of the plane, for which no effective length is given; limit and ratio are those in the plane alone".into()
             } else {
-                "the section has no second moment of area about its other axis; the limit shown is that in the plane alone".into()
+                "NOT CHECKED out of the plane, for which the section has no second moment of area; limit and ratio are those in the plane alone".into()
             });
         }
         self.rows.push(row);
@@ -322,9 +326,11 @@ impl Bench<'_, '_> {
             row.ratio = Some(self.compare(43, &slenderness::UTILISATION));
             row.step = self.number(43);
         } else {
-            row.why = Some(
-                "no effective length out of the plane is given; the demand shown is that in the plane alone".into(),
-            );
+            self.limit(&check::LAMBDA_LIMIT, "checks.slenderness.limit", limit, Measure::Number);
+            row.ratio = Some(self.compare(43, &slenderness::UTILISATION_IN));
+            row.step = self.number(43);
+            row.partial = true;
+            row.why = Some("NOT CHECKED out of the plane, for which no effective length is given; demand and ratio are those in the plane alone".into());
         }
         self.rows.push(row);
     }

@@ -1,7 +1,9 @@
 //! From the worked members and loads to what the solver needs, and its solution.
-use super::Prepared;
+use super::{Prepared, work_one};
 use crate::analysis::{self, Element, Failure, Loading, MemberLoading, Solution, Structure};
+use crate::catalogue::between::{Field, Quantity};
 use crate::catalogue::element::stiffness;
+use crate::formula::Silent;
 use crate::model::{Action, MemberKind, Model};
 
 /// Numbers of the structure for the solver.
@@ -94,11 +96,59 @@ fn add_member_load(
     }
 }
 
-/// Solves every combination.
+/// Above this number of equations the critical load is worked only where it is checked: it costs far more than the
+/// solution itself.
+const LARGE: usize = 4000;
+
+/// Solves every combination and finds its elastic critical load.
 ///
 /// # Errors
 /// The structure can move without resistance, a load acts where nothing resists it, slack bars do not settle, or
 /// the numbers cannot be trusted.
 pub fn solve(model: &Model, prepared: &Prepared) -> Result<Solution, Failure> {
-    analysis::solve(&structure(model, prepared), &loadings(model, prepared))
+    let structure = structure(model, prepared);
+    let mut solution = analysis::solve(&structure, &loadings(model, prepared))?;
+    if solution.equations > LARGE && model.checks.stability.is_none() {
+        return Ok(solution);
+    }
+    for (at, combination) in model.combinations.iter().enumerate() {
+        let solved = &solution.combinations[at];
+        let axial: Vec<Vec<(f64, f64)>> = (0..model.members.len())
+            .map(|member| {
+                let (_, extremes) = work_one(&mut Silent, model, prepared, (member, solved), combination);
+                extremes.field.map_or_else(Vec::new, |field| axial_force(&field))
+            })
+            .collect();
+        let slack: Vec<bool> = solved.members.iter().map(|m| m.slack).collect();
+        solution.combinations[at].critical = analysis::critical_load(&structure, &axial, &slack)?;
+    }
+    Ok(solution)
+}
+
+/// The axial force along a member as straight lines: exact but where an axial load varies along it. There short
+/// chords stand in for the curve, each raised so that it has the curve's mean.
+fn axial_force(field: &Field) -> Vec<(f64, f64)> {
+    const CHORDS: usize = 16;
+    let places = field.places();
+    let mut points = Vec::new();
+    for pair in places.windows(2) {
+        let length = pair[1] - pair[0];
+        let value = |x: f64, after: bool| field.at(Quantity::N, x, after);
+        let bulge = |from: f64, to: f64| {
+            let ends = f64::midpoint(value(from, true), value(to, false));
+            value(f64::midpoint(from, to), true) - ends
+        };
+        let size = value(pair[0], true).abs().max(value(pair[1], false).abs());
+        let straight = bulge(pair[0], pair[0] + length / 2.0).abs().max(bulge(pair[0], pair[1]).abs()) <= 1e-9 * size;
+        let chords = if straight { 1 } else { CHORDS };
+        for at in 0..chords {
+            let from = pair[0] + length * at as f64 / chords as f64;
+            let to = pair[0] + length * (at + 1) as f64 / chords as f64;
+            // A parabola lies above its chord by two thirds of its bulge on the mean.
+            let raise = if straight { 0.0 } else { 2.0 / 3.0 * bulge(from, to) };
+            points.push((from, value(from, true) + raise));
+            points.push((to, value(to, false) + raise));
+        }
+    }
+    points
 }

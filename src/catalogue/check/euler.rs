@@ -11,5 +11,6 @@ definitions! {
     LOAD_OUT: P_OUT, Force, Tree::Pi.squared() * E * IZ / L_OUT.squared(), &source::EULER;
     ALLOWED: P_LIMIT, Force, Tree::Min(vec![P_IN.into(), P_OUT.into()]) / SAFETY, &source::EULER;
     ALLOWED_IN: P_LIMIT, Force, P_IN / SAFETY, &source::EULER;
+    UTILISATION_IN: ETA "Utilisation in buckling in the plane alone; NOT CHECKED out of the plane", Ratio, N_LEAST.tree().absolute() / P_LIMIT, &source::EULER;
     UTILISATION: ETA "Utilisation in buckling", Ratio, N_LEAST.tree().absolute() / P_LIMIT, &source::EULER;
 }
