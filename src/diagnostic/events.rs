@@ -270,7 +270,12 @@ impl Pass<'_> {
                 ),
             ),
         };
-        self.faults.extend(fault);
+        if let Some(fault) = fault {
+            self.faults.push(fault);
+            if let Some(Frame { body: Body::List(_), .. }) = self.open.last() {
+                return;
+            }
+        }
         // Depth is counted where blocks begin; an alias could add more below it.
         let too_deep = self.open.len() + depth(&place) > DEEPEST;
         self.close(place, 0);

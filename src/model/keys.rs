@@ -102,7 +102,7 @@ macro_rules! block {
 }
 
 block! { ROOT "" "One structure, its loads, its checks and the paperwork around it."
-    "calcsheaf" Required, Word(&["1"]), "the version of the input language";
+    "calcsheaf" Required, Word(&["1"]), "the version of the input language; the first line of a file is `calcsheaf: 1`";
     "project" Required, Keys(&PROJECT), "titles, people, revisions and prose";
     "display" Optional, Keys(&DISPLAY), "units, digits, paper and detail";
     "gravity" Else("9.80665 m/s2"), Quantity(Measure::Acceleration, Positive), "acceleration of self-weight";
