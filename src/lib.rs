@@ -16,4 +16,5 @@ pub mod retrace;
 pub mod sheet;
 pub mod typeset;
 pub mod units;
+pub mod work;
 pub mod write;

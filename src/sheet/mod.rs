@@ -1,10 +1,16 @@
 //! The calculation sheet as data: numbered steps, tables and figures, every operand with an address.
 //! It knows no Markdown and no PDF.
+pub(crate) mod chapter;
+mod compose;
+pub mod digits;
 mod ledger;
+mod recording;
 mod step;
 mod table;
 
+pub use compose::{Results, compose, is_worked, results};
 pub use ledger::{Entry, Ledger, Rule};
+pub use recording::{Recording, within};
 pub use step::{Comparison, Step};
 pub use table::{Cell, Column, Row, Table};
 

@@ -1,1 +1,2 @@
-//! (set out in the crate's picture)
+//! Writers: Markdown, SVG, JSON, PDF. Each takes finished values and gives text or bytes.
+pub mod json;

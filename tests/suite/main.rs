@@ -1,1 +1,4 @@
 //! The one test binary: published values, promises, diagnostics, packages, commands, tidiness of the house.
+mod independent;
+mod published;
+mod tidy;
