@@ -67,6 +67,8 @@ codes! {
         "A node, member, section, material or load case is named that the file does not list. The nearest name and the line where they are listed are given as help."
     NamedTwice "E022" "a name stands twice in one list"
         "The second mention would count the thing twice or change nothing; either is probably not meant."
+    NotUtf8 "E023" "the file is not UTF-8"
+        "Input files are text in UTF-8, which every editor can save. A file in another encoding, or one that is no text at all, cannot be read."
     NotAQuantity "E030" "a value is not a quantity"
         "A quantity is a finite number and its unit, such as `12.5 kN`, `2500 mm` or `8 ft 6 in`. Units may be multiplied, divided and raised to powers: `kN/m`, `N/mm2`, `kN·m/rad`."
     WrongDimension "E031" "a quantity measures the wrong thing"

@@ -1,5 +1,6 @@
 //! Many faults at once, in the order of the text.
 use super::{Diagnostic, Severity, Source};
+use std::fmt;
 
 /// Faults of one file, collected so that one run reports them all.
 #[derive(Debug, Clone, Default, PartialEq, Eq)]
@@ -75,6 +76,23 @@ impl Diagnostics {
         self
     }
 }
+
+impl fmt::Display for Diagnostics {
+    /// One line each, for where the text of the file is not at hand.
+    fn fmt(&self, f: &mut fmt::Formatter<'_>) -> fmt::Result {
+        for diagnostic in &self.list {
+            let severity = match diagnostic.severity {
+                Severity::Error => "error",
+                Severity::Warning => "warning",
+            };
+            let (id, address, message) = (diagnostic.code.id(), &diagnostic.address, &diagnostic.message);
+            writeln!(f, "{severity}[{id}] {address}: {message} ({})", diagnostic.label)?;
+        }
+        Ok(())
+    }
+}
+
+impl std::error::Error for Diagnostics {}
 
 impl Extend<Diagnostic> for Diagnostics {
     fn extend<T: IntoIterator<Item = Diagnostic>>(&mut self, more: T) {

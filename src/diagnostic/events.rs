@@ -270,7 +270,12 @@ impl Pass<'_> {
                 ),
             ),
         };
-        self.faults.extend(fault);
+        if let Some(fault) = fault {
+            self.faults.push(fault);
+            if let Some(Frame { body: Body::List(_), .. }) = self.open.last() {
+                return;
+            }
+        }
         // Depth is counted where blocks begin; an alias could add more below it.
         let too_deep = self.open.len() + depth(&place) > DEEPEST;
         self.close(place, 0);
@@ -417,7 +422,12 @@ impl<'t> ByteIndex<'t> {
     }
 
     fn of(&self, marker: &Marker) -> usize {
-        let Some(start) = self.landmarks.get(marker.index() / STRIDE) else { return self.text.len() };
+        let stretch = marker.index() / STRIDE;
+        let Some(start) = self.landmarks.get(stretch) else { return self.text.len() };
+        // Where every character of the stretch is one byte, no walk is needed.
+        if self.landmarks.get(stretch + 1) == Some(&(start + STRIDE)) {
+            return start + marker.index() % STRIDE;
+        }
         self.text[*start..].char_indices().nth(marker.index() % STRIDE).map_or(self.text.len(), |(at, _)| start + at)
     }
 }

@@ -25,9 +25,9 @@ pub struct Diagnostic {
     /// Bytes at fault, where they are narrower than the value or it has no address.
     pub span: Option<Range<usize>>,
     /// What is wrong.
-    pub message: String,
+    pub message: Box<str>,
     /// A few words at the caret.
-    pub label: String,
+    pub label: Box<str>,
     /// What would be right.
     pub help: Vec<String>,
     /// What else bears on it.
@@ -43,8 +43,8 @@ impl Diagnostic {
             severity: Severity::Error,
             address,
             span: None,
-            message: code.title().to_owned(),
-            label: String::new(),
+            message: code.title().into(),
+            label: "".into(),
             help: Vec::new(),
             notes: Vec::new(),
         }
@@ -66,14 +66,14 @@ impl Diagnostic {
     /// Says what is wrong.
     #[must_use]
     pub fn message(mut self, message: impl Into<String>) -> Self {
-        self.message = message.into();
+        self.message = message.into().into_boxed_str();
         self
     }
 
     /// Says a few words at the caret.
     #[must_use]
     pub fn label(mut self, label: impl Into<String>) -> Self {
-        self.label = label.into();
+        self.label = label.into().into_boxed_str();
         self
     }
 

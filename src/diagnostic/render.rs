@@ -93,7 +93,8 @@ fn shown_line(source: &Source, fault: &Range<usize>) -> Shown {
     let end = fault.end.clamp(start, line.end);
     let text = source.text();
     let before: Vec<char> = text[line.start..start].chars().collect();
-    let marked: Vec<char> = text[start..end].trim_end().chars().collect();
+    // Blanks at the end of a value are no part of it; a tab may be the fault itself.
+    let marked: Vec<char> = text[start..end].trim_end_matches([' ', '\r', '\n']).chars().collect();
     let after: Vec<char> = text[line.start..line.end][end - line.start..].chars().collect();
     let mark_room = marked.len().min(WIDEST / 2);
     let after_room = after.len().min(WIDEST / 4);

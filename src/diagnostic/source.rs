@@ -1,6 +1,6 @@
 //! The text of a file with the place of every key and value in it.
 use super::events;
-use super::{Address, Diagnostics, Segment};
+use super::{Address, Code, Diagnostic, Diagnostics, Segment};
 use std::ops::Range;
 
 /// The text of a file, its byte-order mark taken off, and the place of every key and value.
@@ -79,6 +79,22 @@ impl Source {
         let text = text.strip_prefix('\u{feff}').unwrap_or(text);
         let (root, faults) = events::locate(text);
         Self { text: text.to_owned(), line_starts: line_starts(text), root, faults }
+    }
+
+    /// Reads the places of a file as it lies on disk. Bytes that are not UTF-8 are a fault of form.
+    #[must_use]
+    pub fn from_bytes(bytes: &[u8]) -> Self {
+        let fault = match std::str::from_utf8(bytes) {
+            Ok(text) => return Self::new(text),
+            Err(error) => error,
+        };
+        let text = String::from_utf8_lossy(bytes).into_owned();
+        let at = fault.valid_up_to();
+        let mark = text[at..].chars().next().map_or(at, |c| at + c.len_utf8());
+        let fault = Diagnostic::error(Code::NotUtf8, Address::root()).at(at..mark);
+        let fault = fault.message("the file is not text in UTF-8").label("not a character");
+        let faults = [fault.help("save the file as UTF-8, without a password or compression")].into_iter().collect();
+        Self { line_starts: line_starts(&text), text, root: None, faults }
     }
 
     /// The text without its byte-order mark; every span counts in its bytes.
@@ -187,6 +203,15 @@ mod tests {
         assert_eq!(source.line_of(&Address::parse("list[1][1]")), Some(6));
         assert_eq!(source.line_of(&Address::parse("last")), Some(9));
         assert_eq!(source.find(&Address::parse("nodes.2")), None);
+    }
+
+    #[test]
+    fn bytes_that_are_no_text_are_refused_where_they_stand() {
+        let source = Source::from_bytes(b"a: 1\nb: \xff\xfe");
+        assert!(source.root().is_none());
+        let found: Vec<_> = source.faults().iter().map(|d| (d.code, d.span.clone())).collect();
+        assert_eq!(found, [(Code::NotUtf8, Some(8..11))]);
+        assert!(Source::from_bytes("\u{feff}a: ü".as_bytes()).faults().is_empty());
     }
 
     #[test]

@@ -45,6 +45,8 @@ pub enum Sign {
     Any,
     /// Above zero.
     Positive,
+    /// Zero or above.
+    NotNegative,
 }
 
 /// Whether a key may be left out.
@@ -83,7 +85,7 @@ pub struct Block {
 }
 
 use Presence::{Default as Else, Optional, Required};
-use Sign::{Any, Positive};
+use Sign::{Any, NotNegative, Positive};
 use Takes::{
     Block as Keys, Either, Flag, List, Name, Named, Number, OneOrList, Place, Prose, Quantity, Text, Whole, Word,
 };
@@ -102,7 +104,7 @@ macro_rules! block {
 }
 
 block! { ROOT "" "One structure, its loads, its checks and the paperwork around it."
-    "calcsheaf" Required, Word(&["1"]), "the version of the input language";
+    "calcsheaf" Required, Word(&["1"]), "the version of the input language; the first line of a file is `calcsheaf: 1`";
     "project" Required, Keys(&PROJECT), "titles, people, revisions and prose";
     "display" Optional, Keys(&DISPLAY), "units, digits, paper and detail";
     "gravity" Else("9.80665 m/s2"), Quantity(Measure::Acceleration, Positive), "acceleration of self-weight";
@@ -159,7 +161,7 @@ block! { DISPLAY "display" "Units, digits, paper and detail of what is printed; 
 block! { MATERIAL "materials.<name>" "A material."
     "E" Required, Quantity(Measure::Stress, Positive), "modulus of elasticity";
     "G" Optional, Quantity(Measure::Stress, Positive), "shear modulus, for shear deformation";
-    "density" Optional, Quantity(Measure::Density, Positive), "mass or weight per volume, for self-weight";
+    "density" Optional, Quantity(Measure::Density, NotNegative), "mass or weight per volume, for self-weight";
     "expansion" Optional, Quantity(Measure::Expansion, Any), "thermal expansion, for temperature loads";
     "allowable" Optional, Keys(&ALLOWABLE), "stress limits, safety already taken off";
 }

@@ -4,7 +4,7 @@
 mod build;
 mod keys;
 
-pub use build::{build, read};
+pub use build::{build, read, read_source};
 pub use keys::{Block, Key, Presence, Sign, Takes, blocks, shape_keys};
 
 use crate::catalogue::section::{Given, SectionKind};

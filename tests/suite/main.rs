@@ -1,4 +1,5 @@
 //! The one test binary: published values, promises, diagnostics, packages, commands, tidiness of the house.
+mod diagnostics;
 mod independent;
 mod markdown;
 mod published;

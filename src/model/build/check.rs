@@ -121,9 +121,9 @@ fn node_deflection(
 fn limit(raw: &Raw, what: &str) -> Result<DeflectionLimit, Diagnostic> {
     let text = typed(raw, what)?;
     let Some(divisor) = text.strip_prefix('L').map(str::trim_start).and_then(|rest| rest.strip_prefix('/')) else {
-        return quantity(raw, what, Measure::Length, Sign::Positive)
-            .map(DeflectionLimit::Absolute)
-            .map_err(|fault| fault.help("a limit is written `L/360`, or as a length such as `12 mm`"));
+        return quantity(raw, what, Measure::Length, Sign::Positive).map(DeflectionLimit::Absolute).map_err(|fault| {
+            Diagnostic { help: vec!["a limit is written `L/360`, or as a length such as `12 mm`".to_owned()], ..fault }
+        });
     };
     match parse_number(divisor) {
         Ok(divisor) if divisor > 0.0 => Ok(DeflectionLimit::SpanOver(divisor)),

@@ -42,7 +42,9 @@ impl<'a> Fields<'a> {
             faults.push(unknown_key(field, &subject, &keys));
         }
         for key in keys.iter().filter(|key| key.presence == Presence::Required) {
-            if fields.iter().all(|field| field.key != key.name) {
+            // A key that is there but misspelt is one fault, not two.
+            let meant = |field: &Field| field.key == key.name || near(&field.key, &keys) == Some(key.name);
+            if !fields.iter().any(meant) {
                 faults.push(missing_key(raw, &subject, key));
             }
         }
@@ -81,7 +83,7 @@ impl<'a> Fields<'a> {
             Err(fault) => {
                 let about = self.keys.iter().find(|k| k.name == key).filter(|_| fault.code == Code::NoValue);
                 faults.push(match about {
-                    Some(about) => fault.help(format!("`{key}` is {}", about.doc)),
+                    Some(about) => fault.help(format!("`{key}`: {}", about.doc)),
                     None => fault,
                 });
                 None
@@ -164,13 +166,19 @@ pub(super) const FILE: &str = "the file";
 fn unknown_key(field: &Field, subject: &str, keys: &[Key]) -> Diagnostic {
     let fault = Diagnostic::error(Code::UnknownKey, field.value.address.clone()).at(field.key_span.clone());
     let fault = fault.message(format!("{subject} has no key `{}`", field.key)).label("unknown key");
-    match nearest(&field.key, keys.iter().map(|key| key.name)) {
+    match near(&field.key, keys) {
         Some(near) => fault.help(format!("the nearest key is `{near}`")),
         None => fault.help(format!("its keys are {}", leaf::listed(keys.iter().map(|key| key.name), "and"))),
     }
 }
 
+/// The key that a misspelt one was meant to be.
+fn near(typed: &str, keys: &[Key]) -> Option<&'static str> {
+    if keys.iter().any(|key| key.name == typed) { None } else { nearest(typed, keys.iter().map(|key| key.name)) }
+}
+
 fn missing_key(raw: &Raw, subject: &str, key: &Key) -> Diagnostic {
-    let fault = raw.error(Code::MissingKey).message(format!("{subject} has no `{}`", key.name));
-    fault.label(format!("`{}` is missing", key.name)).help(format!("`{}` is {}", key.name, key.doc))
+    let code = if key.name == "calcsheaf" { Code::Version } else { Code::MissingKey };
+    let fault = raw.error(code).message(format!("{subject} has no `{}`", key.name));
+    fault.label(format!("`{}` is missing", key.name)).help(format!("`{}`: {}", key.name, key.doc))
 }

@@ -128,6 +128,10 @@ fn signed(raw: &Raw, what: &str, value: f64, sign: Sign) -> Result<f64, Diagnost
         let fault = raw.error(Code::OutOfRange).message(format!("{what} must be above zero"));
         return Err(fault.label("not above zero"));
     }
+    if sign == Sign::NotNegative && value < 0.0 {
+        let fault = raw.error(Code::OutOfRange).message(format!("{what} must not be below zero"));
+        return Err(fault.label("below zero"));
+    }
     Ok(value)
 }
 

@@ -47,7 +47,7 @@ fn at_fault(fields: &Fields<'_>, key: &str) -> Option<f64> {
 fn density(fields: &Fields<'_>, faults: &mut Diagnostics) -> Option<f64> {
     const EITHER: &[Dimension] = &[Dimension::DENSITY, Dimension::WEIGHT_DENSITY];
     let read =
-        fields.read("density", faults, |raw, what| quantity_of(raw, what, Measure::Density, EITHER, Sign::Positive));
+        fields.read("density", faults, |raw, what| quantity_of(raw, what, Measure::Density, EITHER, Sign::NotNegative));
     match read {
         Some((weight, Dimension::WEIGHT_DENSITY)) => Some(weight / STANDARD_GRAVITY),
         Some((density, _)) => Some(density),

@@ -33,7 +33,14 @@ use names::Directory;
 /// # Errors
 /// Every fault of the file, sorted by place, if it has any.
 pub fn read(text: &str) -> Result<Reading, Diagnostics> {
-    let source = Source::new(text);
+    read_source(Source::new(text))
+}
+
+/// Reads and understands a file whose places are known.
+///
+/// # Errors
+/// Every fault of the file, sorted by place, if it has any.
+pub fn read_source(source: Source) -> Result<Reading, Diagnostics> {
     let raw = input::read(&source).map_err(|faults| faults.placed(&source))?;
     let (model, warnings) = build(&raw, &source)?;
     Ok(Reading { model, warnings, source })

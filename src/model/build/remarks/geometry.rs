@@ -2,6 +2,7 @@
 use super::super::super::{Model, Node};
 use super::address;
 use crate::diagnostic::{Code, Diagnostic};
+use std::collections::BTreeMap;
 
 /// Pairs looked at before giving up: enough for any structure that is worked by hand.
 const MOST_PAIRS: usize = 2_000_000;
@@ -11,6 +12,7 @@ const NEAR: f64 = 1e-6;
 pub(super) fn remarks(model: &Model) -> Vec<Diagnostic> {
     let mut list = loose(model);
     list.extend(same_place(model));
+    list.extend(doubled(model));
     list.extend(crossing(model));
     list
 }
@@ -41,6 +43,22 @@ fn same_place(model: &Model) -> Vec<Diagnostic> {
             let warning = Diagnostic::warning(Code::SamePlace, address("nodes", &b.name));
             let warning = warning.message(format!("nodes `{}` and `{}` stand at the same place", a.name, b.name));
             list.push(warning.label("not joined to each other").help("where a joint is meant, use one node for both"));
+        }
+    }
+    list
+}
+
+fn doubled(model: &Model) -> Vec<Diagnostic> {
+    let mut first: BTreeMap<(usize, usize), &str> = BTreeMap::new();
+    let mut list = Vec::new();
+    for member in &model.members {
+        let ends = (member.from.min(member.to), member.from.max(member.to));
+        if let Some(earlier) = first.get(&ends) {
+            let warning = Diagnostic::warning(Code::Suspicious, address("members", &member.name));
+            let warning = warning.message(format!("members `{earlier}` and `{}` join the same two nodes", member.name));
+            list.push(warning.label("both carry load, side by side").help("take one out if a single member is meant"));
+        } else {
+            first.insert(ends, &member.name);
         }
     }
     list
