@@ -90,12 +90,11 @@ pub fn work_virtual(
     let word = ["x", "y", "r"][direction];
     let measure = if direction == 2 { Measure::Rotation } else { Measure::Length };
     let size = shares.iter().fold(0.0_f64, |most, share| most.max(share.abs()));
-    let stated: Vec<Value> = model
-        .members
-        .iter()
-        .zip(shares)
-        .map(|(member, share)| {
-            sheet.stated(format_args!("{}.K.{name}.{word}.{}.w", combination.name, member.name), *share, size, measure)
+    let rows = model.members.iter().map(|m| m.name.as_str()).zip(shares.iter().copied());
+    let rows = rows.chain((supports.abs() > 1e-12 * size).then_some((SUPPORTS, supports)));
+    let stated: Vec<Value> = rows
+        .map(|(row, share)| {
+            sheet.stated(format_args!("{}.K.{name}.{word}.{row}.w", combination.name), share, size, measure)
         })
         .collect();
     let mut scope = Scope::new(sheet, name, Some(&combination.name));
