@@ -88,6 +88,7 @@ symbols! {
     MF1 "M_F1" Moment "Bending moment at the start from the loads between the ends, ends held"
     MF2 "M_F2" Moment "Bending moment at the end from the loads between the ends, ends held"
     FM "F_m" Force "Load on the middle node along the member"
+    BM "B_m" Force "Balance of the middle node along the member"
     QX1 "Q_x1" Force "Load along the member carried to its start joint"
     QY1 "Q_y1" Force "Load across the member carried to its start joint"
     QX2 "Q_x2" Force "Load along the member carried to its end joint"

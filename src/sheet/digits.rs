@@ -91,8 +91,11 @@ fn print(sheet: &mut Sheet, owed: &[i32], place: &[i32]) {
         let id = step.result as usize;
         let found = from_print(step, &sheet.ledger);
         // Zero that follows from plain inputs or from zeros alone needs no decimals to say how small it is.
-        let plain = step.operands.iter().all(|(_, operand)| sheet.ledger.entry(*operand).rule == Rule::Typed)
-            || sheet.ledger.entry(step.result).size == 0.0;
+        let is_plain = |id: u32| {
+            let operand = sheet.ledger.entry(id);
+            operand.rule == Rule::Typed || operand.printed.count == 0
+        };
+        let plain = step.operands.iter().all(|(_, id)| is_plain(*id)) || sheet.ledger.entry(step.result).size == 0.0;
         let entry = sheet.ledger.entry_mut(step.result);
         let value = entry.in_unit();
         let is_zero = entry.value.abs() <= DUST * entry.size;

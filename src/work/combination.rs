@@ -241,6 +241,10 @@ impl Chain<'_> {
             self.out.v = [Some(v1), Some(v2)];
             self.out.m = [Some(m1), Some(m2)];
         }
+        if self.kind == MemberKind::Bar3 {
+            let loaded = self.out.fixed[6].is_some();
+            self.scope.balance('N', 31, if loaded { &bar3::MIDDLE_BALANCE } else { &bar3::MIDDLE_BALANCE_UNLOADED });
+        }
         let [x1, y1, x2, y2]: [&Known; 4] = match self.kind {
             MemberKind::Frame => [&joint::START_X, &joint::START_Y, &joint::END_X, &joint::END_Y],
             MemberKind::Beam => [&joint::BEAM_START_X, &joint::BEAM_START_Y, &joint::BEAM_END_X, &joint::BEAM_END_Y],
@@ -267,10 +271,12 @@ impl Chain<'_> {
         if self.out.fixed[6].is_some() {
             let [c, s] = [C, S].map(|symbol| self.scope.get(&symbol).map_or(0.0, |v| v.si) != 0.0);
             let mut part = |has: bool, nn, definition: &Known| has.then(|| self.scope.work('F', nn, definition));
-            self.out.on_joint = [
-                [part(c, 11, &joint::SLACK_START_X), part(s, 12, &joint::SLACK_START_Y)],
-                [part(c, 13, &joint::SLACK_END_X), part(s, 14, &joint::SLACK_END_Y)],
-            ];
+            let [x1, y1, x2, y2]: [&Known; 4] = if self.out.fixed[0].is_some() && self.out.fixed[1].is_some() {
+                [&joint::SLACK_START_X, &joint::SLACK_START_Y, &joint::SLACK_END_X, &joint::SLACK_END_Y]
+            } else {
+                [&joint::SLACK_EVEN_START_X, &joint::SLACK_EVEN_START_Y, &joint::SLACK_EVEN_END_X, &joint::SLACK_EVEN_END_Y]
+            };
+            self.out.on_joint = [[part(c, 11, x1), part(s, 12, y1)], [part(c, 13, x2), part(s, 14, y2)]];
         }
     }
 }

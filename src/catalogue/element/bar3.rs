@@ -13,5 +13,7 @@ definitions! {
     STRAIN_END_UNLOADED: E2, Strain, (3 * U - 4 * UM) / L, &source::QUADRATIC_BAR;
     STRAIN_START: E1, Strain, EU1 + EF1, &source::FIXED_END;
     STRAIN_END: E2, Strain, EU2 + EF2, &source::FIXED_END;
+    MIDDLE_BALANCE: BM, Force, FM - BA * (16 * UM - 8 * U) / (3 * L), &source::QUADRATIC_BAR;
+    MIDDLE_BALANCE_UNLOADED: BM, Force, -(BA * (16 * UM - 8 * U) / (3 * L)), &source::QUADRATIC_BAR;
     MIDDLE_FORCE: FM, Force, BA * (16 * UM - 8 * U) / (3 * L), &source::QUADRATIC_BAR;
 }

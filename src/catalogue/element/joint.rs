@@ -20,6 +20,10 @@ definitions! {
     SLACK_START_Y: FY1, Force, S * (NF1 + 3 * FM / 4), &source::STATICS;
     SLACK_END_X: FX2, Force, C * (3 * FM / 4 - NF2), &source::STATICS;
     SLACK_END_Y: FY2, Force, S * (3 * FM / 4 - NF2), &source::STATICS;
+    SLACK_EVEN_START_X: FX1, Force, C * (3 * FM / 4), &source::STATICS;
+    SLACK_EVEN_START_Y: FY1, Force, S * (3 * FM / 4), &source::STATICS;
+    SLACK_EVEN_END_X: FX2, Force, C * (3 * FM / 4), &source::STATICS;
+    SLACK_EVEN_END_Y: FY2, Force, S * (3 * FM / 4), &source::STATICS;
     BEAM_START_X: FX1, Force, S * V1, &source::TURNING;
     BEAM_START_Y: FY1, Force, -(C * V1), &source::TURNING;
     BEAM_END_X: FX2, Force, -(S * V2), &source::TURNING;

@@ -1,6 +1,6 @@
 //! One load worked on one member: which formulas apply, in which order, under which numbers.
 use super::bench::{Bench, Known, nn};
-use super::{component, couple, line, point, strain, taper, uniform};
+use super::{component, couple, fixed_end, line, point, strain, taper, uniform};
 use crate::catalogue::symbol::*;
 use crate::formula::{Scope, Symbol, Value, Worksheet};
 use crate::model::{Direction, MemberKind, MemberLoad};
@@ -226,9 +226,12 @@ impl Bench<'_, '_> {
             } else {
                 self.step(nn::FIRST_ALONG, &uniform::FIRST_ALONG);
                 if self.kind == MemberKind::Bar3 {
+                    // The quadratic shape is exact for a uniform load: its end strains need no load part.
                     self.step(nn::SECOND_ALONG, &uniform::SECOND_ALONG);
+                    self.worked.fixed[6] = Some(self.step(nn::MIDDLE, &fixed_end::THREE_NODE_MIDDLE));
+                } else {
+                    self.along_by_sums();
                 }
-                self.along_by_sums();
             }
         }
         if across.is_some() {
