@@ -54,7 +54,7 @@ pub fn facts(
             .iter()
             .map(|c| BalanceSheet {
                 combination: c.name.clone(),
-                groups: steps.groups(&[("", "structure", Some(&c.name), 'R', 0..40)]),
+                groups: steps.groups(&[("", "structure", Some(&c.name), 'R', 0..30)]),
             })
             .collect(),
         load_audit: model
@@ -388,7 +388,7 @@ fn second_answers(model: &Model, results: &Results, sheet: &Sheet, steps: &Index
     }
     for (at, member) in model.members.iter().enumerate() {
         for (c, combination) in model.combinations.iter().enumerate() {
-            if results.governing[at] != c && results.deflecting[at] != Some(c) {
+            if !is_worked(model, results, at, c) {
                 continue;
             }
             groups.extend(steps.groups(&[

@@ -10,7 +10,6 @@ pub(super) fn diagnose(model: &Model, failure: &Failure) -> Vec<Diagnostic> {
     let members: Vec<String> = model.members.iter().map(|m| m.name.clone()).collect();
     let combinations: Vec<String> = model.combinations.iter().map(|c| c.name.clone()).collect();
     let names = Names { nodes: &nodes, members: &members, combinations: &combinations };
-    let mut lines = failure.describe(&names).into_iter();
     let code = match failure {
         Failure::LoadedFreeDirection { .. } => Code::NoStiffness,
         Failure::Untrustworthy { .. } | Failure::Inconsistent { .. } => Code::BeyondArithmetic,
@@ -21,15 +20,25 @@ pub(super) fn diagnose(model: &Model, failure: &Failure) -> Vec<Diagnostic> {
         Failure::NoSupport => Address::parse("nodes"),
         _ => Address::parse("supports"),
     };
-    let mut diagnostic = Diagnostic::error(code, address).message(lines.next().unwrap_or_default());
-    let rest: Vec<String> = lines.collect();
-    if let Some((help, notes)) = rest.split_last() {
-        for note in notes {
-            diagnostic = diagnostic.note(note.clone());
+    // The first sentence says what is so, the last what usually mends it, lines between what else is known.
+    let mut sentences: Vec<String> = failure.describe(&names).iter().flat_map(|line| sentences(line)).collect();
+    let message = if sentences.is_empty() { String::new() } else { sentences.remove(0) };
+    let mut diagnostic = Diagnostic::error(code, address).message(message);
+    if let Some(help) = sentences.pop() {
+        for note in sentences {
+            diagnostic = diagnostic.note(note);
         }
-        diagnostic = diagnostic.help(help.clone());
+        diagnostic = diagnostic.help(help);
     }
     vec![diagnostic]
+}
+
+/// Sentences of a text, without the stop at their end.
+fn sentences(text: &str) -> Vec<String> {
+    text.split(". ")
+        .map(|sentence| sentence.trim().trim_end_matches('.').to_owned())
+        .filter(|s| !s.is_empty())
+        .collect()
 }
 
 /// Below this elastic critical load factor first-order results are not enough by themselves.

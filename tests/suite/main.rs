@@ -1,6 +1,9 @@
 //! The one test binary: published values, promises, diagnostics, packages, commands, tidiness of the house.
+mod commands;
 mod diagnostics;
 mod independent;
+mod laws;
 mod markdown;
+mod packages;
 mod published;
 mod tidy;

@@ -242,7 +242,7 @@ fn shares(model: &Model, again: &VirtualMovement, sheet: &mut Recording<'_>) -> 
     let mut table = Builder::new(id, title, "member").column("w", measure).note(
         "∫(N·n/EA + M·m/EI) with n and m from a unit force at the node; N and M are those of the end forces and loads.",
     );
-    for (member, share) in model.members.iter().zip(&again.shares) {
+    for (member, share) in model.members.iter().zip(&again.shares).filter(|(_, share)| **share != 0.0) {
         let value =
             sheet.stated(format_args!("{combination}.K.{node}.{word}.{}.w", member.name), *share, *share, measure);
         table.row(&member.name, vec![Cell::Quantity(value.id)]);
