@@ -56,6 +56,10 @@ impl<'a> Cursor<'a> {
         if self.run(|c| c.is_ascii_digit()).is_empty() {
             return Err(self.unexpected("a number"));
         }
+        let whole = &self.text[start..self.at];
+        if whole.len() > 1 && whole.starts_with('0') {
+            return Err(FormulaFault::new(start..self.at, format!("`{whole}` begins with a zero too many")));
+        }
         if self.eat(".") && self.run(|c| c.is_ascii_digit()).is_empty() {
             return Err(FormulaFault::new(start..self.at, "digits are missing after the decimal point"));
         }

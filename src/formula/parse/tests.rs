@@ -152,6 +152,8 @@ fn faults_say_where() {
     check(parse_symbols, "a/b·c", "·");
     check(parse_symbols, "2a", "a");
     check(parse_symbols, "exp(a)", "exp");
+    check(parse_symbols, "2 + 03", "03");
+    check(parse_numbers, "00.5 mm", "00");
     check(parse_symbols, "sin(a, b)", ",");
     check(parse_symbols, "a¹²⁸", "¹²⁸");
     check(parse_symbols, "5 kN", " ");
