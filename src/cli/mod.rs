@@ -2,6 +2,7 @@
 #![allow(clippy::disallowed_methods, reason = "files, environment and terminal belong here")]
 mod files;
 mod pack;
+mod retrace;
 
 use clap::{Parser, Subcommand};
 use std::io::Write;
@@ -24,6 +25,8 @@ struct Arguments {
 enum Command {
     /// Solve a structure and write its package: Markdown, PDF, results, figures.
     Pack(pack::Pack),
+    /// Read a package back and confirm every line of it.
+    Retrace(retrace::Retrace),
 }
 
 /// What a command ends with, as the input contract sets it out.
@@ -58,6 +61,7 @@ pub fn run() -> ExitCode {
     };
     let outcome = match arguments.command {
         Command::Pack(pack) => pack.run(),
+        Command::Retrace(retrace) => retrace.run(),
     };
     ExitCode::from(outcome.code())
 }

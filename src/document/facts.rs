@@ -217,6 +217,10 @@ facts! {
         section_tables: Vec<String>,
         /// Ids of the tables of materials.
         material_tables: Vec<String>,
+        /// Ids of the tables of combinations.
+        combination_tables: Vec<String>,
+        /// Ids of the tables of limits.
+        limit_tables: Vec<String>,
         /// Steps that work material constants.
         material_steps: Vec<String>,
         /// Values that stand because the input says nothing: sentences, such as `Gravity is 9.80665 m/s².`

@@ -5,5 +5,6 @@ mod independent;
 mod laws;
 mod markdown;
 mod packages;
+mod promises;
 mod published;
 mod tidy;

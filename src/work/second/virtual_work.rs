@@ -91,7 +91,8 @@ pub fn work_virtual(
     let measure = if direction == 2 { Measure::Rotation } else { Measure::Length };
     let size = shares.iter().fold(0.0_f64, |most, share| most.max(share.abs()));
     // Members that the unit force does not reach have no share.
-    let rows = model.members.iter().map(|m| m.name.as_str()).zip(shares.iter().copied()).filter(|(_, share)| *share != 0.0);
+    let rows =
+        model.members.iter().map(|m| m.name.as_str()).zip(shares.iter().copied()).filter(|(_, share)| *share != 0.0);
     let rows = rows.chain((supports.abs() > 1e-12 * size).then_some((SUPPORTS, supports)));
     let stated: Vec<Value> = rows
         .map(|(row, share)| {
