@@ -119,7 +119,7 @@ fn report(folder: &Path, stem: &str, solved: &package::Solved, beyond: usize) {
         "{}: {within} checks within their limits, {beyond} beyond, {unchecked} not checked",
         folder.join(stem).display()
     ));
-    if let Some(worst) = checks.first().filter(|worst| worst.ok().is_some())
+    if let Some(worst) = checks.first()
         && let Some(ratio) = worst.ratio
     {
         say(&format!(

@@ -15,7 +15,7 @@ pub(super) fn facts(model: &Model, results: &Results, sheet: &Sheet) -> CheckFac
     let kinds: Vec<String> =
         kinds.iter().filter(|kind| asked_for(model, kind)).map(|kind| (*kind).to_owned()).collect();
     CheckFacts {
-        governing: rows.first().filter(|row| row.verdict != "NOT CHECKED").cloned(),
+        governing: rows.first().filter(|row| !row.ratio.is_empty()).cloned(),
         within: count(Some(true)),
         beyond: count(Some(false)),
         not_checked: count(None),

@@ -8,7 +8,7 @@ use crate::work::Check;
 #[must_use]
 pub fn sorted_checks(results: &Results) -> Vec<&Check> {
     let mut checks: Vec<&Check> = results.combinations.iter().flat_map(|c| &c.checks).collect();
-    let rank = |check: &Check| check.ok().and(check.ratio).unwrap_or(-1.0);
+    let rank = |check: &Check| check.ratio.unwrap_or(-1.0);
     checks.sort_by(|a, b| rank(b).total_cmp(&rank(a)));
     checks
 }
