@@ -1,1 +1,2 @@
 //! (set out in the crate's picture)
+pub mod pdf;
