@@ -24,13 +24,7 @@ pub(super) struct Pack {
 impl Pack {
     pub(super) fn run(&self) -> Outcome {
         let templates = Templates::built_in();
-        let fonts = match Fonts::built_in() {
-            Ok(fonts) => fonts,
-            Err(fault) => {
-                warn(&format!("error: the built-in fonts cannot be read: {fault}"));
-                return Outcome::Failed;
-            }
-        };
+        let fonts = Fonts::built_in();
         self.inputs.iter().map(|input| self.one(input, &templates, &fonts)).max().unwrap_or(Outcome::Good)
     }
 

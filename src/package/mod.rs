@@ -131,6 +131,7 @@ impl Solved {
     /// A font cannot be used.
     pub fn pdf(&self, package: &Package, fonts: &Fonts) -> Result<Vec<u8>, String> {
         let pages = typeset::typeset(&package.document, &package.sheet, self.model.display.paper, fonts);
-        write::pdf::write(&pages, fonts).map_err(|fault| fault.to_string())
+        let facts = write::pdf::Facts::of(&package.document.head);
+        write::pdf::write(&pages, fonts, &facts).map_err(|fault| fault.to_string())
     }
 }

@@ -1,11 +1,160 @@
-//! temporary
-pub struct Fonts;
-pub struct Pages;
-impl Fonts {
-    pub fn built_in() -> Result<Self, String> {
-        Ok(Fonts)
+//! Sets a document on paper: frames of placed glyphs, rules and paths. Knows no PDF.
+mod block;
+mod contents;
+mod figure;
+#[cfg(test)]
+pub(crate) mod fixture;
+mod flow;
+mod font;
+mod frame;
+mod geometry;
+mod head;
+mod maths;
+mod paragraph;
+mod step;
+mod table;
+mod text;
+
+pub use font::{Constants, Face, FaceName, Fonts, Growth, MathFont, Part};
+pub use frame::{Anchor, Frame, Glyph, Item, Link, Path, Rule, Run, Slot};
+
+use crate::document::{Block, Document, Inline};
+use crate::model::Paper;
+use crate::sheet::Sheet;
+use block::Column;
+use flow::Flow;
+use geometry::Geometry;
+use std::collections::{BTreeMap, BTreeSet};
+use text::{Setter, Type};
+
+/// A document on paper.
+#[derive(Debug, Default)]
+pub struct Pages {
+    /// Width of a sheet, points.
+    pub width: f32,
+    /// Height of a sheet, points.
+    pub height: f32,
+    /// Sheets in order; y runs downward from the top edge.
+    pub sheets: Vec<Frame>,
+    /// Where links lead: steps, tables, rows of tables, figures, headings.
+    pub places: BTreeMap<Box<str>, Spot>,
+    /// Headings in order.
+    pub outline: Vec<Bookmark>,
+    /// Characters that no face has; a framed code point stands for each.
+    pub missing: BTreeSet<char>,
+}
+
+/// A place on paper.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct Spot {
+    /// Index of the sheet.
+    pub sheet: usize,
+    /// Distance from the top edge, points.
+    pub y: f32,
+}
+
+/// A heading, as a reader's list of bookmarks shows it.
+#[derive(Debug, Clone, PartialEq)]
+pub struct Bookmark {
+    /// 1 for the title, 2 for parts, 3 and 4 below.
+    pub level: u8,
+    /// Its words.
+    pub text: String,
+    /// Where it stands.
+    pub spot: Spot,
+}
+
+impl Pages {
+    /// Where an address leads: to the thing itself, or to the nearest thing that holds it (a cell's row, its table).
+    #[must_use]
+    pub fn spot(&self, address: &str) -> Option<Spot> {
+        let mut name = address;
+        loop {
+            if let Some(spot) = self.places.get(name) {
+                return Some(*spot);
+            }
+            name = &name[..name.rfind('.')?];
+        }
     }
 }
-pub fn typeset(_: &crate::document::Document, _: &crate::sheet::Sheet, _: crate::model::Paper, _: &Fonts) -> Pages {
-    Pages
+
+/// Sets a document on sheets of paper.
+#[must_use]
+pub fn typeset(document: &Document, sheet: &Sheet, paper: Paper, fonts: &Fonts) -> Pages {
+    let geometry = Geometry::of(paper);
+    let mut setter = Setter::new(fonts);
+    let mut flow = Flow::new(geometry);
+    let column = Column { left: geometry.text, geometry: &geometry, sheet, document };
+    for block in &document.blocks {
+        if matches!(block, Block::NewSheet) {
+            flow.new_sheet();
+        }
+        for slab in block::set(block, column, &mut setter) {
+            flow.push(slab);
+        }
+    }
+    flow.settle();
+    let mut sheets = flow.sheets;
+    if sheets.is_empty() {
+        sheets.push(Frame::default());
+    }
+    let mut pages = Pages { width: geometry.width, height: geometry.height, ..Pages::default() };
+    collect_places(&sheets, &mut pages.places);
+    let count = sheets.len();
+    for (at, body) in sheets.into_iter().enumerate() {
+        let mut frame = Frame::default();
+        head::set(&document.head, at + 1, count, &mut setter, &mut frame, &geometry);
+        frame.append(body, 0.0, 0.0);
+        fill_slots(&mut frame, &pages, &mut setter);
+        pages.sheets.push(frame);
+    }
+    pages.outline = outline(document, &pages);
+    pages.missing = setter.missing;
+    pages
+}
+
+fn collect_places(sheets: &[Frame], places: &mut BTreeMap<Box<str>, Spot>) {
+    for (sheet, frame) in sheets.iter().enumerate() {
+        for anchor in &frame.anchors {
+            places.entry(anchor.name.clone()).or_insert(Spot { sheet, y: anchor.y });
+        }
+    }
+}
+
+fn fill_slots(frame: &mut Frame, pages: &Pages, setter: &mut Setter<'_>) {
+    for slot in std::mem::take(&mut frame.slots) {
+        if let Some(spot) = pages.spot(&slot.to) {
+            let number = (spot.sheet + 1).to_string();
+            let kind = Type::new(FaceName::Regular, slot.size);
+            let width = setter.width(&number, kind);
+            setter.set(frame, &number, kind, slot.right - width, slot.y);
+        }
+    }
+}
+
+fn outline(document: &Document, pages: &Pages) -> Vec<Bookmark> {
+    let headings = document.blocks.iter().filter_map(|block| match block {
+        Block::Heading { level, text, anchor } => Some((*level, text, anchor)),
+        _ => None,
+    });
+    headings
+        .filter_map(|(level, text, anchor)| {
+            Some(Bookmark { level, text: words(text), spot: pages.places.get(anchor.as_str()).copied()? })
+        })
+        .collect()
+}
+
+/// The words of inline text, without its styles.
+fn words(inlines: &[Inline]) -> String {
+    let mut text = String::new();
+    for inline in inlines {
+        match inline {
+            Inline::Text(words) | Inline::Code(words) => text.push_str(words),
+            Inline::Strong(inner) | Inline::Emphasis(inner) | Inline::Link { text: inner, .. } => {
+                text.push_str(&words(inner));
+            }
+            Inline::Break => text.push(' '),
+        }
+    }
+    text
 }

@@ -1,0 +1,53 @@
+//! The table of contents, made from the headings; numbers of sheets are filled in when all are set.
+use super::FaceName;
+use super::flow::Slab;
+use super::frame::{Frame, Item, Link, Path, Slot};
+use super::geometry::{BASELINE, Geometry, LEADING, TEXT};
+use super::paragraph::Paragraph;
+use super::text::{Setter, Type};
+use crate::document::{Block, Document};
+
+/// Room for the number of a sheet.
+const NUMBER: f32 = 26.0;
+/// Distance between the dots of a leader.
+const DOTS: f32 = 4.4;
+
+/// Sets a line for each heading of a part, and for those below it.
+pub(super) fn set(document: &Document, setter: &mut Setter<'_>, g: &Geometry) -> Vec<Slab> {
+    let mut slabs = Vec::new();
+    for block in &document.blocks {
+        let Block::Heading { level, text, anchor } = block else { continue };
+        let (left, face, before) = match level {
+            2 => (g.text, FaceName::Bold, 5.0),
+            3 => (g.text + 14.0, FaceName::Regular, 0.0),
+            _ => continue,
+        };
+        let words = Paragraph::new(text, Type::new(face, TEXT));
+        let lines = words.lines(setter, g.right - left - NUMBER - 12.0);
+        let count = lines.len();
+        for (at, line) in lines.into_iter().enumerate() {
+            let mut frame = Frame::default();
+            let end = left + line.width;
+            words.set(setter, &mut frame, line, left, BASELINE);
+            if at + 1 == count {
+                leader(&mut frame, end + 5.0, g.right - NUMBER);
+                frame.slots.push(Slot { right: g.right, y: BASELINE, size: TEXT, to: anchor.as_str().into() });
+            }
+            let (y, height) = (BASELINE - TEXT * 0.85, LEADING);
+            frame.links.push(Link { x: left, y, width: g.right - left, height, to: anchor.as_str().into() });
+            let before = if at == 0 { before } else { 0.0 };
+            slabs.push(Slab { frame, height: LEADING, before, keep: at + 1 < count, ..Slab::default() });
+        }
+    }
+    slabs
+}
+
+/// Dots on a grid common to all lines, drawn rather than set so that they are not read out.
+fn leader(frame: &mut Frame, from: f32, to: f32) {
+    let start = to - ((to - from) / DOTS).floor() * DOTS;
+    if to - start > 2.0 * DOTS {
+        let points = vec![[start, BASELINE - 0.5], [to, BASELINE - 0.5]];
+        let stroke = Some((0.8, &[0.8_f32, DOTS - 0.8] as &[f32], 90));
+        frame.items.push(Item::Path(Box::new(Path { points, closed: false, stroke, fill: None })));
+    }
+}

@@ -1,0 +1,130 @@
+//! Tables: numbers aligned on their points, rules only where they divide, heads repeated on the next sheet.
+mod cell;
+mod columns;
+mod rows;
+
+use cell::{Content, Head};
+use columns::{Layout, fit};
+
+use super::FaceName;
+use super::block::{Column, space};
+use super::flow::Slab;
+use super::frame::{Anchor, Frame};
+use super::geometry::{BASELINE, FINE, LEADING, SMALL};
+use super::paragraph::Paragraph;
+use super::step::tick;
+use super::text::{Setter, Type};
+use crate::document::Inline;
+use crate::sheet::Table;
+
+const APART: f32 = 11.0;
+
+/// A table ready to be laid out: everything measured at [`SMALL`].
+struct Content2D {
+    heads: Vec<Head>,
+    rows: Vec<Vec<Content>>,
+    /// Where each row's cells are addressed, if they are.
+    anchors: Vec<Option<String>>,
+    /// Whether cells are left open to be written in.
+    open: bool,
+}
+
+/// A table that steps may draw on.
+pub(super) fn of_sheet(table: &Table, column: Column<'_>, setter: &mut Setter<'_>) -> Vec<Slab> {
+    let g = column.geometry;
+    let content = Content2D {
+        heads: std::iter::once(Head::words(&table.head)).chain(table.columns.iter().map(Head::of)).collect(),
+        rows: table
+            .rows
+            .iter()
+            .map(|row| {
+                let name = std::iter::once(Content::name(&row.name));
+                name.chain(row.cells.iter().map(|cell| Content::of(cell, column.sheet))).collect()
+            })
+            .collect(),
+        anchors: table.rows.iter().map(|row| Some(format!("{}.{}", table.id, row.name))).collect(),
+        open: false,
+    };
+    let mut slabs = Vec::new();
+    let mut frame = Frame::default();
+    frame.anchors.push(Anchor { name: table.id.as_str().into(), y: 0.0 });
+    let bold = Type::new(FaceName::Bold, SMALL);
+    let width = setter.set(&mut frame, &table.id, bold, g.left, BASELINE);
+    tick(&mut frame, g, BASELINE);
+    if width > g.text - g.left - 8.0 {
+        slabs.push(Slab { frame: std::mem::take(&mut frame), height: LEADING, keep: true, ..Slab::default() });
+    }
+    let title = Paragraph::plain(&table.title, Type::new(FaceName::Regular, SMALL + 1.0));
+    for line in title.lines(setter, g.right - g.text) {
+        title.set(setter, &mut frame, line, g.text, BASELINE);
+        slabs.push(Slab { frame: std::mem::take(&mut frame), height: LEADING, keep: true, ..Slab::default() });
+    }
+    if !frame.items.is_empty() {
+        slabs.push(Slab { frame, height: LEADING, keep: true, ..Slab::default() });
+    }
+    if let Some(last) = slabs.last_mut() {
+        last.after = 3.0;
+    }
+    slabs.extend(laid_out(&content, g.left, column, setter));
+    if let Some(note) = &table.note {
+        slabs.extend(remark(note, column, setter));
+    }
+    space(&mut slabs, APART, APART);
+    slabs
+}
+
+/// A table of words alone.
+pub(super) fn of_words(
+    head: &[Vec<Inline>],
+    rows: &[Vec<Vec<Inline>>],
+    column: Column<'_>,
+    setter: &mut Setter<'_>,
+) -> Vec<Slab> {
+    let width = rows.iter().map(Vec::len).chain([head.len()]).max().unwrap_or(0);
+    if width == 0 {
+        return Vec::new();
+    }
+    let cell = |row: &[Vec<Inline>], at: usize| row.get(at).map_or(Content::Empty, |words| Content::inline(words));
+    let content = Content2D {
+        heads: (0..width).map(|at| Head::inline(head.get(at).map_or(&[], Vec::as_slice))).collect(),
+        rows: rows.iter().map(|row| (0..width).map(|at| cell(row, at)).collect()).collect(),
+        anchors: vec![None; rows.len()],
+        open: rows.iter().any(|row| (0..width).any(|at| matches!(cell(row, at), Content::Empty))),
+    };
+    let mut slabs = laid_out(&content, column.left, column, setter);
+    space(&mut slabs, APART, APART);
+    slabs
+}
+
+/// Finds a layout and sets the rows; a table too wide for any becomes several, one below the other.
+fn laid_out(content: &Content2D, widest_left: f32, column: Column<'_>, setter: &mut Setter<'_>) -> Vec<Slab> {
+    let g = column.geometry;
+    let layouts: Vec<Layout> = fit(content, g.right - column.left, g.right - widest_left, setter);
+    let mut slabs = Vec::new();
+    for (part, layout) in layouts.iter().enumerate() {
+        let left = if layout.wide { widest_left } else { column.left };
+        let mut rows = rows::set(content, layout, left, setter, g);
+        if part > 0 {
+            space(&mut rows, APART, 0.0);
+        }
+        slabs.append(&mut rows);
+    }
+    slabs
+}
+
+fn remark(note: &str, column: Column<'_>, setter: &mut Setter<'_>) -> Vec<Slab> {
+    let mut paragraph = Paragraph::default();
+    paragraph.add("note ", Type::new(FaceName::Italic, FINE), None);
+    paragraph.add(" ", Type::new(FaceName::Regular, FINE), None);
+    paragraph.add(note, Type::new(FaceName::Regular, FINE), None);
+    let leading = FINE * 1.42;
+    let lines = paragraph.lines(setter, column.geometry.right - column.geometry.text);
+    let mut slabs: Vec<Slab> = Vec::new();
+    for line in lines {
+        let mut frame = Frame::default();
+        paragraph.set(setter, &mut frame, line, column.geometry.text, leading - 0.25 * FINE);
+        slabs.push(Slab { frame, height: leading, ..Slab::default() });
+    }
+    space(&mut slabs, 4.0, 0.0);
+    slabs
+}

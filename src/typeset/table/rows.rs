@@ -1,0 +1,129 @@
+//! Sets the head and the rows of a table as strips.
+use super::Content2D;
+use super::cell::{CELL, Content, Head};
+use super::columns::{GAP, Layout, Placed};
+use crate::typeset::flow::Slab;
+use crate::typeset::frame::{Anchor, Frame, Item, Rule};
+use crate::typeset::geometry::{Geometry, SMALL};
+use crate::typeset::text::{Setter, Type};
+use std::rc::Rc;
+
+/// Distance from row to row over the size of type, and of rows left open for writing.
+const LEADING: f32 = 1.46;
+const OPEN: f32 = 2.6;
+/// A little space after so many rows guides the eye along long tables.
+const GROUP: usize = 5;
+
+pub(super) fn set(content: &Content2D, layout: &Layout, left: f32, setter: &mut Setter<'_>, g: &Geometry) -> Vec<Slab> {
+    let width: f32 = layout.columns.iter().map(|column| column.width).sum::<f32>()
+        + GAP * layout.scale * layout.columns.len().saturating_sub(1) as f32;
+    // Rules may not reach past the text even where a column was rounded up.
+    let width = width.min(g.right - left);
+    let count = content.rows.len();
+    let head = Rc::new(head(content, layout, left, width, setter));
+    let mut slabs = vec![Slab { frame: head.frame.clone(), height: head.height, keep: count > 0, ..Slab::default() }];
+    for at in 0..count {
+        let mut slab = row(content, at, layout, left, setter);
+        slab.head = Some(Rc::clone(&head));
+        // A single last row does not stand alone on the next sheet.
+        slab.keep = at + 1 < count && (at == 0 || at + 2 == count);
+        if content.open && at + 1 < count {
+            thin(&mut slab.frame, left, slab.height, width, 0.3);
+        }
+        if count > GROUP + 3 && at % GROUP == GROUP - 1 && at + 1 < count {
+            slab.height += 3.0;
+        }
+        if at + 1 == count {
+            thin(&mut slab.frame, left, slab.height + 1.0, width, 0.4);
+            slab.height += 1.4;
+        }
+        slabs.push(slab);
+    }
+    slabs
+}
+
+fn thin(frame: &mut Frame, x: f32, y: f32, width: f32, height: f32) {
+    frame.items.push(Item::Rule(Rule { x, y, width, height, grey: 0 }));
+}
+
+fn head(content: &Content2D, layout: &Layout, left: f32, width: f32, setter: &mut Setter<'_>) -> Slab {
+    let size = SMALL * layout.scale;
+    let leading = size * 1.25;
+    let mut frame = Frame::default();
+    let mut lines = 1;
+    for column in &layout.columns {
+        if let Head::Words(words) = &content.heads[column.index] {
+            lines = lines.max(words.scaled(layout.scale).lines(setter, column.width + 0.02).len());
+        }
+    }
+    let mut x = left;
+    for column in &layout.columns {
+        let right = numeric(content, column.index);
+        // Headings stand on the rule: short ones share the last line of long ones.
+        match &content.heads[column.index] {
+            Head::Words(words) => {
+                let words = words.scaled(layout.scale);
+                let set = words.lines(setter, column.width + 0.02);
+                let first = lines - set.len();
+                for (at, line) in set.into_iter().enumerate() {
+                    let shift = if right { column.width - line.width } else { 0.0 };
+                    let y = size + leading * (first + at) as f32;
+                    words.set(setter, &mut frame, line, x + shift, y);
+                }
+            }
+            Head::Symbol(symbol, unit) => {
+                let from = frame.items.len();
+                let width = Head::set_symbol(symbol, unit, layout.scale, setter, &mut frame);
+                let shift = if right { column.width - width } else { 0.0 };
+                frame.shift(from, x + shift, size + leading * (lines - 1) as f32);
+            }
+        }
+        x += column.width + GAP * layout.scale;
+    }
+    let height = leading * lines as f32 + 0.35 * size;
+    thin(&mut frame, left, height, width, 0.7);
+    Slab { frame, height: height + 3.0, keep: true, ..Slab::default() }
+}
+
+/// Whether a column's headings stand over numbers, at the right.
+fn numeric(content: &Content2D, index: usize) -> bool {
+    content.rows.iter().any(|row| matches!(row.get(index), Some(Content::Number(..))))
+}
+
+fn row(content: &Content2D, at: usize, layout: &Layout, left: f32, setter: &mut Setter<'_>) -> Slab {
+    let size = SMALL * layout.scale;
+    let leading = size * LEADING;
+    let mut frame = Frame::default();
+    if let Some(name) = &content.anchors[at] {
+        frame.anchors.push(Anchor { name: name.as_str().into(), y: 0.0 });
+    }
+    let mut lines = 1;
+    let mut x = left;
+    for column in &layout.columns {
+        match content.rows[at].get(column.index) {
+            Some(Content::Words(words)) => {
+                let words = words.scaled(layout.scale);
+                let set = words.lines(setter, column.width + 0.02);
+                lines = lines.max(set.len());
+                for (line_at, line) in set.into_iter().enumerate() {
+                    let y = size * 1.04 + size * 1.25 * line_at as f32;
+                    words.set(setter, &mut frame, line, x, y);
+                }
+            }
+            Some(Content::Number(text, split)) => number(text, *split, *column, layout.scale, x, setter, &mut frame),
+            _ => {}
+        }
+        x += column.width + GAP * layout.scale;
+    }
+    let open = content.open && content.rows[at].iter().any(|cell| matches!(cell, Content::Empty));
+    let least = if open { size * OPEN } else { leading };
+    Slab { frame, height: (leading + size * 1.25 * (lines - 1) as f32).max(least), ..Slab::default() }
+}
+
+fn number(text: &str, split: usize, column: Placed, scale: f32, x: f32, setter: &mut Setter<'_>, frame: &mut Frame) {
+    let kind = Type { size: SMALL * scale, ..CELL };
+    let before = setter.width(&text[..split], kind);
+    // Numbers stand at the right end of the column as a block, their points in one line.
+    let left = x + column.width - column.number_width + column.before_point - before;
+    setter.set(frame, text, kind, left, kind.size * 1.04);
+}

@@ -1,0 +1,141 @@
+//! The last pass over the file: the streams put in their places, bookmarks, language, dates, identity.
+use super::{Facts, PdfFault};
+use crate::typeset::{Bookmark, Pages};
+use lopdf::{Dictionary, Document, Object, ObjectId, SaveOptions, Stream, StringFormat, dictionary};
+use sha2::{Digest, Sha256};
+
+/// Puts the streams in place and gives the file's bytes.
+pub(super) fn finish(
+    mut document: Document,
+    streams: impl Iterator<Item = Vec<u8>>,
+    pages: &Pages,
+    facts: &Facts,
+) -> Result<Vec<u8>, PdfFault> {
+    let fault = |reason: lopdf::Error| PdfFault::File(reason.to_string());
+    document.version = "1.7".into();
+    let page_ids: Vec<ObjectId> = document.get_pages().into_values().collect();
+    let mut identity = Sha256::new();
+    for (page, content) in page_ids.iter().zip(streams) {
+        identity.update(&content);
+        let page = document.get_dictionary_mut(*page).map_err(fault)?;
+        mark_links_printable(page);
+        let contents = page.get(b"Contents").and_then(Object::as_reference).map_err(fault)?;
+        document.set_object(contents, Stream::new(Dictionary::new(), content));
+    }
+    let outline = bookmarks(&mut document, &pages.outline, &page_ids, pages.height);
+    let catalog = document.catalog_mut().map_err(fault)?;
+    catalog.set("Lang", Object::string_literal("en"));
+    catalog.set("PageLayout", Object::Name(b"SinglePage".to_vec()));
+    catalog.set("ViewerPreferences", dictionary! { "DisplayDocTitle" => true });
+    if let Some(outline) = outline {
+        catalog.set("Outlines", outline);
+        catalog.set("PageMode", Object::Name(b"UseOutlines".to_vec()));
+    }
+    let info = information(facts);
+    for (key, value) in &info {
+        identity.update(key);
+        identity.update(value.as_str().unwrap_or_default());
+    }
+    let info = document.add_object(info);
+    if let Ok(old) = document.trailer.get(b"Info").and_then(Object::as_reference) {
+        document.objects.remove(&old);
+    }
+    document.trailer.set("Info", info);
+    let id = Object::String(identity.finalize()[..16].to_vec(), StringFormat::Hexadecimal);
+    document.trailer.set("ID", vec![id.clone(), id]);
+    document.compress();
+    let mut bytes = Vec::new();
+    let options = SaveOptions::builder().use_object_streams(true).use_xref_streams(true).compression_level(6).build();
+    document.save_with_options(&mut bytes, options).map_err(|reason| PdfFault::File(reason.to_string()))?;
+    Ok(bytes)
+}
+
+/// Links that are part of the page rather than of the screen carry the print flag (ISO 32000-1, 12.5.3).
+fn mark_links_printable(page: &mut Dictionary) {
+    match page.get_mut(b"Annots").and_then(Object::as_array_mut) {
+        Ok(links) if links.is_empty() => {
+            page.remove(b"Annots");
+        }
+        Ok(links) => links.iter_mut().filter_map(|link| link.as_dict_mut().ok()).for_each(|link| link.set("F", 4)),
+        Err(_) => {}
+    }
+}
+
+fn information(facts: &Facts) -> Dictionary {
+    let mut info = Dictionary::new();
+    let texts = [
+        ("Title", &facts.title),
+        ("Author", &facts.author),
+        ("Subject", &facts.subject),
+        ("Creator", &facts.producer),
+        ("Producer", &facts.producer),
+    ];
+    for (key, text) in texts {
+        if !text.is_empty() {
+            info.set(key, lopdf::text_string(text));
+        }
+    }
+    let digits: String = facts.date.chars().filter(char::is_ascii_digit).collect();
+    if digits.len() == 8 {
+        for key in ["CreationDate", "ModDate"] {
+            info.set(key, Object::string_literal(format!("D:{digits}000000Z")));
+        }
+    }
+    info
+}
+
+/// The headings as a tree of bookmarks; deeper levels start closed.
+fn bookmarks(document: &mut Document, outline: &[Bookmark], page_ids: &[ObjectId], height: f32) -> Option<Object> {
+    if outline.is_empty() {
+        return None;
+    }
+    let root = document.new_object_id();
+    let ids: Vec<ObjectId> = outline.iter().map(|_| document.new_object_id()).collect();
+    // The nearest earlier heading of a higher rank is the parent.
+    let mut above: Vec<usize> = Vec::new();
+    let mut parents: Vec<Option<usize>> = Vec::with_capacity(outline.len());
+    for (at, bookmark) in outline.iter().enumerate() {
+        while above.last().is_some_and(|&last| outline[last].level >= bookmark.level) {
+            above.pop();
+        }
+        parents.push(above.last().copied());
+        above.push(at);
+    }
+    let mut children: Vec<Vec<usize>> = vec![Vec::new(); outline.len() + 1];
+    for (at, parent) in parents.iter().enumerate() {
+        children[parent.map_or(0, |parent| parent + 1)].push(at);
+    }
+    let link = |dict: &mut Dictionary, key: &str, to: Option<usize>| {
+        if let Some(to) = to {
+            dict.set(key, ids[to]);
+        }
+    };
+    for family in &children {
+        for (place, &at) in family.iter().enumerate() {
+            let bookmark = &outline[at];
+            let top = super::tidy(height - bookmark.spot.y + 6.0);
+            let page = page_ids.get(bookmark.spot.sheet).copied().map_or(Object::Null, Object::Reference);
+            let mut dict = dictionary! {
+                "Title" => lopdf::text_string(&bookmark.text),
+                "Parent" => parents[at].map_or(root, |parent| ids[parent]),
+                "Dest" => vec![page, "XYZ".into(), Object::Null, top.into(), Object::Null],
+            };
+            link(&mut dict, "Prev", place.checked_sub(1).and_then(|before| family.get(before)).copied());
+            link(&mut dict, "Next", family.get(place + 1).copied());
+            let own = &children[at + 1];
+            link(&mut dict, "First", own.first().copied());
+            link(&mut dict, "Last", own.last().copied());
+            if !own.is_empty() {
+                dict.set("Count", if bookmark.level == 1 { own.len() as i64 } else { -(own.len() as i64) });
+            }
+            document.set_object(ids[at], dict);
+        }
+    }
+    let open: usize =
+        children[0].iter().map(|&at| 1 + if outline[at].level == 1 { children[at + 1].len() } else { 0 }).sum();
+    let mut dict = dictionary! { "Type" => "Outlines", "Count" => open as i64 };
+    link(&mut dict, "First", children[0].first().copied());
+    link(&mut dict, "Last", children[0].last().copied());
+    document.set_object(root, dict);
+    Some(Object::Reference(root))
+}

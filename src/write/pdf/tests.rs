@@ -1,0 +1,1 @@
+//! Tests of the file: what a reader program finds in it.
