@@ -30,6 +30,7 @@ pub fn confirm(package: &Package, input: Option<&str>) -> Report {
     addresses.chains(&mut findings, &mut coverage);
     let mut confirmed = addresses.drawn_cells().clone();
     naming::check_symbols(package, &mut findings);
+    naming::check_combinations(package, &mut findings);
     naming::check_cells(package, &mut confirmed, &mut findings);
     quote::check(package, &mut confirmed, &mut findings, &mut coverage);
     coverage.table_numbers_confirmed = confirmed.len();

@@ -27,6 +27,32 @@ pub(super) fn check_symbols(package: &Package, findings: &mut Vec<Finding>) {
     }
 }
 
+/// A step of one combination draws on no other combination, though its numbers may print alike.
+///
+/// Combinations are known by their tables of displacements, `<combination>.U`.
+pub(super) fn check_combinations(package: &Package, findings: &mut Vec<Finding>) {
+    let ids = package.tables.iter().filter_map(|table| table.id.as_deref());
+    let combinations: BTreeSet<&str> = ids.filter_map(|id| id.strip_suffix(".U")).collect();
+    let of_step = |number: &str| match number.split('.').collect::<Vec<_>>().as_slice() {
+        [_, combination, _] => combinations.get(combination).copied(),
+        _ => None,
+    };
+    for step in &package.steps {
+        let Some(own) = of_step(&step.number) else { continue };
+        for (symbol, address) in &step.from {
+            let of_cell = || match address.split('.').collect::<Vec<_>>().as_slice() {
+                [combination, _, _, _] => combinations.get(combination).copied(),
+                _ => None,
+            };
+            if let Some(other) = of_step(address).or_else(of_cell).filter(|other| *other != own) {
+                let expected = format!("operands of combination {own}");
+                let found = format!("{symbol} of combination {other}, {address}");
+                findings.push(Finding::of(&step.number, step.from_line, expected, found));
+            }
+        }
+    }
+}
+
 /// A cell `<combination>.<id>.<subject>.<symbol>` agrees with a step of that subject and combination that gives that
 /// symbol, where there are such steps.
 pub(super) fn check_cells(package: &Package, confirmed: &mut BTreeSet<Cell>, findings: &mut Vec<Finding>) {

@@ -96,6 +96,16 @@ fn one_kind_of_step_gives_one_symbol() {
 }
 
 #[test]
+fn a_step_keeps_to_its_combination() {
+    let table = |id: &str| format!("**Table {id}** Movements\n\n| end | u, mm |\n|---|---:|\n| end | 0.2976 |\n\n");
+    let with_table = SAMPLE.replacen("## Member T1", &format!("{}## Member T1", table("C2.U")), 1);
+    assert!(report(&with_table).ok());
+    let found = report(&with_table.replacen("u₂ C1.U.end.u", "u₂ C2.U.end.u", 1));
+    assert_eq!(found.findings.len(), 1, "{found}");
+    assert!(found.to_string().contains("expected operands of combination C1"), "{found}");
+}
+
+#[test]
 fn steps_that_rest_on_themselves_are_found() {
     // x and y print the same and draw on each other.
     let step = |number: &str, below: &str| {
