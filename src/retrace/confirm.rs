@@ -2,7 +2,7 @@
 use super::package::Package;
 use super::report::{Coverage, Report};
 use super::trace::Addresses;
-use super::{closing, fingerprint, quote, verdict};
+use super::{closing, fingerprint, naming, quote, verdict};
 use std::collections::BTreeSet;
 
 /// Confirms every line of a package; with the input at hand also that the package belongs to it.
@@ -19,7 +19,7 @@ pub fn confirm(package: &Package, input: Option<&str>) -> Report {
         loose_numbers: package.loose_numbers,
         ..Coverage::default()
     };
-    let addresses = Addresses::new(package, &mut findings);
+    let mut addresses = Addresses::new(package, &mut findings);
     let typed = package.echo.as_ref().map_or(Vec::new(), |echo| echo.numbers());
     let is_input = |number: f64| typed.binary_search_by(|known| known.total_cmp(&number)).is_ok();
     for step in &package.steps {
@@ -28,7 +28,12 @@ pub fn confirm(package: &Package, input: Option<&str>) -> Report {
         coverage.operands_traced += addresses.trace(step, &operands, &mut findings);
     }
     addresses.chains(&mut findings, &mut coverage);
-    quote::check(package, &mut findings, &mut coverage);
+    let mut confirmed = addresses.drawn_cells().clone();
+    naming::check_symbols(package, &mut findings);
+    naming::check_combinations(package, &mut findings);
+    naming::check_cells(package, &mut confirmed, &mut findings);
+    quote::check(package, &mut confirmed, &mut findings, &mut coverage);
+    coverage.table_numbers_confirmed = confirmed.len();
     verdict::check(package, &mut findings, &mut remarks, &mut coverage);
     fingerprint::check(package, input, &mut findings);
     findings.sort();

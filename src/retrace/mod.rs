@@ -11,6 +11,7 @@ mod confirm;
 mod evaluate;
 mod fingerprint;
 mod markdown;
+mod naming;
 mod package;
 mod quote;
 mod report;

@@ -2,11 +2,12 @@
 use super::Finding;
 use super::package::Package;
 use super::report::Coverage;
-use super::step::PrintedStep;
+use super::step::{PrintedStep, is_step_number};
 use super::table::PrintedTable;
-use super::verdict;
+use super::trace::Cell;
+use super::verdict::{in_words, said};
 use crate::formula::PrintedNumber;
-use std::collections::BTreeMap;
+use std::collections::{BTreeMap, BTreeSet};
 
 /// Headings of columns that quote the result of the step a row names.
 const QUOTING: &[&str] = &["ratio", "η", "utilisation", "result"];
@@ -14,15 +15,24 @@ const QUOTING: &[&str] = &["ratio", "η", "utilisation", "result"];
 const DUST: f64 = 1e-6;
 
 /// Looks at every table.
-pub(super) fn check(package: &Package, findings: &mut Vec<Finding>, coverage: &mut Coverage) {
+pub(super) fn check(
+    package: &Package,
+    confirmed: &mut BTreeSet<Cell>,
+    findings: &mut Vec<Finding>,
+    coverage: &mut Coverage,
+) {
     let steps: BTreeMap<&str, &PrintedStep> = package.steps.iter().map(|step| (step.number.as_str(), step)).collect();
-    for table in &package.tables {
+    for (at, table) in package.tables.iter().enumerate() {
+        let mut here = BTreeSet::new();
         if table.id.is_some() {
             coverage.tables += 1;
         }
         check_cells(table, findings, coverage);
-        check_quotes(table, &steps, findings, coverage);
-        check_totals(table, findings);
+        check_quotes(table, &steps, &mut here, findings, coverage);
+        check_totals(table, &mut here, findings);
+        if table.id.is_some() {
+            confirmed.extend(here.into_iter().map(|(row, column)| (at, row, column)));
+        }
     }
 }
 
@@ -58,70 +68,64 @@ fn check_cells(table: &PrintedTable, findings: &mut Vec<Finding>, coverage: &mut
     }
 }
 
-/// A row that names one step prints the step's result in its own digits, and its verdict.
+/// A row that names one step prints the step's result in its own digits, and its verdict; a ratio is that of the demand
+/// and the limit beside it.
 fn check_quotes(
     table: &PrintedTable,
     steps: &BTreeMap<&str, &PrintedStep>,
+    confirmed: &mut BTreeSet<(usize, usize)>,
     findings: &mut Vec<Finding>,
     coverage: &mut Coverage,
 ) {
-    let heading = |at: usize| table.columns.get(at).map_or(String::new(), |(symbol, _)| symbol.to_lowercase());
+    let headings: Vec<String> = table.columns.iter().map(|(symbol, _)| symbol.to_lowercase()).collect();
+    let heading = |at: usize| headings.get(at).map_or("", String::as_str);
+    let speaks_of_steps = table.head.to_lowercase().contains("step") || headings.iter().any(|h| h.contains("step"));
     for (row_at, row) in table.rows.iter().enumerate() {
-        let mut named = None;
-        for (at, cell) in row.cells.iter().enumerate() {
-            match steps.get(cell.as_str()) {
-                Some(step) => named = Some(*step),
-                None if heading(at) == "step" && cell.contains('.') => {
-                    findings.push(Finding::at(row.line, "a step of this package", format!("`{cell}`")));
-                }
-                None => {}
+        let mut find = |expected: String, found: String| findings.push(Finding::at(row.line, expected, found));
+        for (at, cell) in std::iter::once(&row.name).chain(&row.cells).enumerate() {
+            // The first of these is the name of the row.
+            let is_address = at.checked_sub(1).is_some_and(|at| heading(at) == "step") && cell.contains('.');
+            if (is_address || speaks_of_steps && is_step_number(cell)) && !steps.contains_key(cell.as_str()) {
+                find("a step of this package".into(), format!("`{cell}`"));
             }
         }
-        let numbers: Vec<(usize, _)> =
+        let named = row.cells.iter().find_map(|cell| steps.get(cell.as_str()).copied());
+        let numbers: Vec<(usize, PrintedNumber)> =
             (0..row.cells.len()).filter_map(|at| Some((at, table.number(row_at, at)?))).collect();
-        let quoting: Vec<_> = numbers.iter().filter(|(at, _)| QUOTING.contains(&heading(*at).as_str())).collect();
-        let said =
-            (0..row.cells.len()).find(|at| heading(*at) == "verdict").and_then(|at| verdict::said(&row.cells[at]));
-        if let [(_, ratio)] = quoting.as_slice() {
-            let of = |words: &str| numbers.iter().find(|(at, _)| heading(*at) == words).map(|(_, number)| number);
-            if let (Some(demand), Some(limit)) = (of("demand"), of("limit"))
-                && !is_ratio_of(ratio, demand, limit)
-            {
-                findings.push(Finding::at(
-                    row.line,
-                    format!("the ratio of {demand} and {limit}"),
-                    format!("`{ratio}`"),
-                ));
+        let quoting: Vec<_> = numbers.iter().filter(|(at, _)| QUOTING.contains(&heading(*at))).collect();
+        let under = |words: &str| numbers.iter().find(|(at, _)| heading(*at) == words);
+        if let ([(_, ratio)], Some((at, demand)), Some((limit_at, limit))) =
+            (quoting.as_slice(), under("demand"), under("limit"))
+        {
+            if is_ratio_of(ratio, demand, limit) {
+                confirmed.extend([(row_at, *at), (row_at, *limit_at)]);
+            } else {
+                find(format!("the ratio of {demand} and {limit}"), format!("`{ratio}`"));
             }
         }
-        if let Some(step) = named {
+        if let Some(step) = named
+            && !numbers.is_empty()
+        {
             let same = |(_, number): &(usize, PrintedNumber)| number.prints_as(&step.result);
             let is_quoted = if quoting.is_empty() { numbers.iter().any(same) } else { quoting.iter().all(|n| same(n)) };
             if is_quoted {
-                coverage.quotes += usize::from(!numbers.is_empty());
-            } else if !numbers.is_empty() {
+                coverage.quotes += 1;
+                confirmed.extend(numbers.iter().filter(|n| same(n)).map(|(at, _)| (row_at, *at)));
+            } else {
                 let found = quoting.first().map_or("none of that kind".into(), |(_, number)| format!("`{number}`"));
-                findings.push(Finding::at(
-                    row.line,
-                    format!("`{}`, the result of step {}", step.result, step.number),
-                    found,
-                ));
+                find(format!("`{}`, the result of step {}", step.result, step.number), found);
             }
-            if let (Some(said), Some(comparison)) = (said, &step.comparison)
-                && said != comparison.ok
-            {
-                let expected = format!("the verdict of step {}", step.number);
-                findings.push(Finding::at(row.line, expected, format!("`{}`", verdict::words(said))));
+        }
+        let verdict = (0..row.cells.len()).find(|at| heading(*at) == "verdict").and_then(|at| said(&row.cells[at]));
+        let Some(verdict) = verdict else { continue };
+        match (named.and_then(|step| step.comparison.as_ref().map(|c| (step, c))), quoting.as_slice()) {
+            (Some((step, comparison)), _) if comparison.ok != verdict => {
+                find(format!("the verdict of step {}", step.number), format!("`{}`", in_words(verdict)));
             }
-        } else if let (Some(said), [(_, ratio)]) = (said, quoting.as_slice())
-            && ratio.unit.text.is_empty()
-            && said != (ratio.printed.value() <= 1.0)
-        {
-            findings.push(Finding::at(
-                row.line,
-                format!("the verdict that {ratio} has"),
-                format!("`{}`", verdict::words(said)),
-            ));
+            (None, [(_, ratio)]) if ratio.unit.text.is_empty() && verdict != (ratio.printed.value() <= 1.0) => {
+                find(format!("the verdict that {ratio} has"), format!("`{}`", in_words(verdict)));
+            }
+            _ => {}
         }
     }
 }
@@ -145,7 +149,7 @@ fn is_ratio_of(ratio: &PrintedNumber, demand: &PrintedNumber, limit: &PrintedNum
 }
 
 /// A row named `total` or `sum` is the sum of the rows above it, down from the total before.
-fn check_totals(table: &PrintedTable, findings: &mut Vec<Finding>) {
+fn check_totals(table: &PrintedTable, confirmed: &mut BTreeSet<(usize, usize)>, findings: &mut Vec<Finding>) {
     let mut start = 0;
     for (row_at, row) in table.rows.iter().enumerate() {
         if !["total", "sum"].contains(&row.name.to_lowercase().as_str()) {
@@ -163,7 +167,11 @@ fn check_totals(table: &PrintedTable, findings: &mut Vec<Finding>) {
             let unit = parts.iter().chain([&total]).map(|n| n.printed.unit_of_last_place()).fold(0.0, f64::max);
             // Not a number fails here as well.
             let is_close = (sum - total.printed.value()).abs() <= unit * (1.0 + DUST);
-            if !is_close {
+            if is_close {
+                confirmed.extend(
+                    (start..=row_at).map(|at| (at, column_at)).filter(|(at, _)| table.number(*at, column_at).is_some()),
+                );
+            } else {
                 let symbol = &table.columns.get(column_at).map_or("", |(symbol, _)| symbol);
                 let expected = format!("{sum} for the {} of {symbol}", row.name);
                 findings.push(Finding::at(row.line, expected, format!("`{total}`")));

@@ -51,6 +51,8 @@ pub struct Coverage {
     pub tables: usize,
     /// Numbers in their cells.
     pub table_numbers: usize,
+    /// Those of them on which a step draws, or which were compared with a step or added up.
+    pub table_numbers_confirmed: usize,
     /// Results quoted in tables and in the verdict that were compared with their step.
     pub quotes: usize,
     /// Numbers on the page that belong to no step and to no table, such as those of prose: nobody confirmed them.
@@ -89,7 +91,8 @@ impl fmt::Display for Report {
         let coverage = &self.coverage;
         writeln!(f, "steps confirmed: {} of {}", coverage.steps_confirmed, coverage.steps)?;
         writeln!(f, "operands traced: {} of {}", coverage.operands_traced, coverage.operands)?;
-        writeln!(f, "tables: {} with {} numbers", coverage.tables, coverage.table_numbers)?;
+        writeln!(f, "tables: {}", coverage.tables)?;
+        writeln!(f, "numbers in tables confirmed: {} of {}", coverage.table_numbers_confirmed, coverage.table_numbers)?;
         writeln!(f, "quoted results compared: {}", coverage.quotes)?;
         writeln!(f, "numbers in neither step nor table: {}", coverage.loose_numbers)?;
         if !coverage.orphans.is_empty() {

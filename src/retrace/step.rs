@@ -129,7 +129,7 @@ impl PrintedStep {
 }
 
 /// `<subject>[.<combination>].<letter><nn>`; more letters may come.
-fn is_step_number(text: &str) -> bool {
+pub(super) fn is_step_number(text: &str) -> bool {
     let Some((subject, last)) = text.rsplit_once('.') else { return false };
     let mut last = last.chars();
     let is_letter = last.next().is_some_and(|letter| letter.is_ascii_uppercase());

@@ -10,6 +10,8 @@ pub struct PrintedTable {
     pub id: Option<String>,
     /// The line of its head.
     pub line: usize,
+    /// Heading of the first column.
+    pub head: String,
     /// Symbol and unit of each column but the first; a column of words has no unit either.
     pub columns: Vec<(String, Unit)>,
     /// Its rows.
@@ -29,7 +31,9 @@ pub struct PrintedRow {
 
 impl PrintedTable {
     pub(super) fn read(before: Option<Line<'_>>, head: Line<'_>, rows: &[Line<'_>]) -> Self {
-        let columns = cells(head.text).into_iter().skip(1).map(|heading| column(&heading)).collect();
+        let mut headings = cells(head.text).into_iter();
+        let first = headings.next().unwrap_or_default();
+        let columns = headings.map(|heading| column(&heading)).collect();
         let rows = rows
             .iter()
             .map(|line| {
@@ -37,7 +41,7 @@ impl PrintedTable {
                 PrintedRow { line: line.number, name: cells.next().unwrap_or_default(), cells: cells.collect() }
             })
             .collect();
-        Self { id: before.and_then(|line| id(line.text)), line: head.number, columns, rows }
+        Self { id: before.and_then(|line| id(line.text)), line: head.number, head: first, columns, rows }
     }
 
     /// The number in a cell, with its own unit or the column's; `None` where no number stands.

@@ -6,8 +6,8 @@ use super::step::PrintedStep;
 use crate::diagnostic::{Address, Source};
 use crate::formula::{PrintedNumber, Symbol};
 use crate::units::{Dimension, parse_number, parse_quantity};
-use std::collections::BTreeMap;
 use std::collections::btree_map::Entry;
+use std::collections::{BTreeMap, BTreeSet};
 
 /// Kinds of step that end a chain: comparisons, balances, extremes.
 const FINAL_LETTERS: &str = "CNRX";
@@ -16,14 +16,19 @@ const FINAL_LETTERS: &str = "CNRX";
 #[derive(Debug, Clone, PartialEq)]
 enum Place {
     Step(usize),
-    Cell(usize, usize, usize),
+    Cell(Cell),
 }
+
+/// A cell: table, row and column, each from 0.
+pub(super) type Cell = (usize, usize, usize);
 
 /// Every address of the package.
 pub(super) struct Addresses<'p> {
     package: &'p Package,
     places: BTreeMap<String, Place>,
     input: Option<Source>,
+    /// Cells on which steps draw.
+    drawn: BTreeSet<Cell>,
 }
 
 impl<'p> Addresses<'p> {
@@ -46,17 +51,22 @@ impl<'p> Addresses<'p> {
             for (row_at, row) in table.rows.iter().enumerate() {
                 for (column_at, (symbol, _)) in table.columns.iter().enumerate() {
                     if row.cells.get(column_at).is_some_and(|cell| !cell.is_empty()) {
-                        add(format!("{id}.{}.{symbol}", row.name), Place::Cell(at, row_at, column_at), row.line);
+                        add(format!("{id}.{}.{symbol}", row.name), Place::Cell((at, row_at, column_at)), row.line);
                     }
                 }
             }
         }
-        Self { package, places, input: package.echo.as_ref().map(|echo| Source::new(&echo.text)) }
+        Self {
+            package,
+            places,
+            input: package.echo.as_ref().map(|echo| Source::new(&echo.text)),
+            drawn: BTreeSet::new(),
+        }
     }
 
     /// Follows every operand of a step and gives how many were traced.
     pub(super) fn trace(
-        &self,
+        &mut self,
         step: &PrintedStep,
         operands: &BTreeMap<Symbol, PrintedNumber>,
         findings: &mut Vec<Finding>,
@@ -66,7 +76,12 @@ impl<'p> Addresses<'p> {
             // A symbol that is not in the formula was found before.
             let Some(number) = operands.get(&Symbol::owned(symbol.clone())) else { continue };
             match self.compare(address, number) {
-                Ok(()) => traced += 1,
+                Ok(()) => {
+                    traced += 1;
+                    if let Some(Place::Cell(cell)) = self.places.get(address) {
+                        self.drawn.insert(*cell);
+                    }
+                }
                 Err((expected, found)) => {
                     let expected = format!("{expected} at {address}, for {symbol}");
                     findings.push(Finding::of(&step.number, step.from_line, expected, found));
@@ -76,10 +91,15 @@ impl<'p> Addresses<'p> {
         traced
     }
 
+    /// Cells on which a step draws, printing the same.
+    pub(super) fn drawn_cells(&self) -> &BTreeSet<Cell> {
+        &self.drawn
+    }
+
     fn compare(&self, address: &str, number: &PrintedNumber) -> Result<(), (String, String)> {
         let there = match self.places.get(address) {
             Some(Place::Step(at)) => self.package.steps.get(*at).map(|step| step.result.clone()),
-            Some(Place::Cell(table, row, column)) => {
+            Some(Place::Cell((table, row, column))) => {
                 self.package.tables.get(*table).and_then(|table| table.number(*row, *column))
             }
             None => return self.compare_input(address, number),
@@ -129,23 +149,34 @@ impl<'p> Addresses<'p> {
             .map(|(step, _)| step.number.clone())
             .collect();
 
-        // Taking away what nothing draws on, again and again, leaves the steps that are part of a ring or below one.
-        let mut free: Vec<usize> = (0..steps.len()).filter(|&at| drawn_on[at] == 0).collect();
-        let mut is_free = vec![false; steps.len()];
-        while let Some(at) = free.pop() {
-            is_free[at] = true;
-            for &below in &draws[at] {
-                drawn_on[below] -= 1;
-                if drawn_on[below] == 0 {
-                    free.push(below);
-                }
-            }
+        // What nothing draws on is part of no ring, and what draws on nothing: taken away again and again, rings are left.
+        let mut draws_on: Vec<Vec<usize>> = vec![Vec::new(); steps.len()];
+        for (at, below) in draws.iter().enumerate() {
+            below.iter().for_each(|&below| draws_on[below].push(at));
         }
+        let above_rings = left_over(&draws, drawn_on);
+        let below_rings = left_over(&draws_on, draws.iter().map(Vec::len).collect());
         for (at, step) in steps.iter().enumerate() {
-            if !is_free[at] && draws[at].iter().any(|&below| !is_free[below]) {
+            if above_rings[at] && below_rings[at] {
                 let found = "a chain that leads back to the step";
                 findings.push(Finding::of(&step.number, step.from_line, "operands worked before it", found));
             }
         }
     }
+}
+
+/// Nodes of a graph that remain when those without an incoming edge are taken away again and again.
+fn left_over(edges: &[Vec<usize>], mut incoming: Vec<usize>) -> Vec<bool> {
+    let mut free: Vec<usize> = (0..edges.len()).filter(|&at| incoming[at] == 0).collect();
+    let mut is_left = vec![true; edges.len()];
+    while let Some(at) = free.pop() {
+        is_left[at] = false;
+        for &next in &edges[at] {
+            incoming[next] -= 1;
+            if incoming[next] == 0 {
+                free.push(next);
+            }
+        }
+    }
+    is_left
 }

@@ -24,7 +24,7 @@ pub(super) fn said(text: &str) -> Option<bool> {
 }
 
 /// The verdict in words.
-pub(super) fn words(ok: bool) -> &'static str {
+pub(super) fn in_words(ok: bool) -> &'static str {
     if ok { "OK" } else { "NOT OK" }
 }
 
@@ -76,8 +76,8 @@ fn check_governing(package: &Package, findings: &mut Vec<Finding>, coverage: &mu
         match said(after) {
             Some(said) if said == ok => {}
             found => {
-                let found = found.map_or("no verdict", words);
-                findings.push(Finding::at(*line, format!("`{}`", words(ok)), found));
+                let found = found.map_or("no verdict", in_words);
+                findings.push(Finding::at(*line, format!("`{}`", in_words(ok)), found));
             }
         }
         if let Some(largest) = largest

@@ -72,7 +72,7 @@ fn bearing_lines() -> Vec<(usize, &'static str)> {
         } else if line.starts_with("| ") && line.contains(|c: char| c.is_ascii_digit()) && !line.contains("Revision") {
             // The name of a row is a word; where steps draw on the row it is part of an address.
             let is_drawn_on =
-                ["| A | 0", "| B |", "| RS |", "| K1 |", "| start", "| end"].iter().any(|row| line.starts_with(row));
+                ["| A | 0", "| B |", "| RS |", "| K1 | 2", "| start", "| end"].iter().any(|row| line.starts_with(row));
             let at = if is_drawn_on { 0 } else { line[2..].find("| ").map_or(0, |at| at + 2) };
             found.push((offset + at, &line[at..]));
         }
@@ -93,7 +93,8 @@ fn cannot_show(line: &str, change: &Change) -> bool {
     // A zero is zero in every unit, and within 0.01 of 0.01.
     let zero = line.contains("= 0.00 kN") && (change.to == "1" || is_part_of("kN"));
     // One unit of the last place, in a total and what it is made of.
-    let total = ["−30.00", "0.00 |", "40.00", "4.00", "44.00"].iter().any(|text| is_part_of(text)) && change.to == "1";
+    let total = ["−30.00", "50.0 |", "0.00 |", "40.00", "4.00", "44.00"].iter().any(|text| is_part_of(text))
+        && change.to == "1";
     own_name || is_last_of_chain || words || quoted || zero || total
 }
 

@@ -31,7 +31,9 @@ fn a_sound_package_is_confirmed() {
     let coverage = &report.coverage;
     assert_eq!((coverage.steps, coverage.steps_confirmed), (10, 10));
     assert_eq!((coverage.operands, coverage.operands_traced), (26, 26));
-    assert_eq!((coverage.tables, coverage.quotes), (6, 3));
+    assert_eq!((coverage.tables, coverage.quotes), (7, 3));
+    // All but nothing: every number of the tables is drawn on, added up, quoted or named.
+    assert_eq!((coverage.table_numbers, coverage.table_numbers_confirmed), (23, 23));
     assert!(coverage.orphans.is_empty(), "{:?}", coverage.orphans);
     assert!(report.remarks.is_empty(), "{report}");
 }
@@ -59,6 +61,7 @@ fn faults_are_told_by_step_and_line() {
     check_caught("= 150.0 MPa", "= 150.2 MPa", "within 1 unit");
     check_caught("= 0.00 kN", "= −0.00 kN", "a zero stands without a minus sign");
     check_caught("| K | 0.00 |", "| K | −0.00 |", "a zero without a minus sign");
+    check_caught("| T1 | 50.0 |", "| T1 | 50.2 |", "`50.00 kN`, N of step T1.C1.F01");
     check_caught("| total | −30.00 | 44.00 |", "| total | −30.00 | 45.00 |", "44 for the total");
     check_caught("| B | 3 | −4 |", "| B | 3 |", "3 cells");
     check_caught("```step K1.C1.S01", "```step K1.C1.C01", "a second time");
@@ -80,6 +83,26 @@ fn a_formula_changed_in_both_lines_does_not_close() {
     assert!(report(&text).to_string().contains("a volume in `66666.7 mm³`"), "{}", report(&text));
     let text = SAMPLE.replacen("W = b·h²/6", "W = b·h²/8", 1).replacen("(100 mm)²/6", "(100 mm)²/8", 1);
     assert!(report(&text).to_string().contains("expected 50000"), "{}", report(&text));
+}
+
+#[test]
+fn one_kind_of_step_gives_one_symbol() {
+    let step = |subject: &str, symbol: &str| {
+        format!("```step {subject}.G01\nLength\n{symbol} = l\n  = 5.000 m\n  = 5.000 m\nfrom: l T1.G01\n```\n\n")
+    };
+    let text = format!("{}{}## Member K1", step("T2", "L"), step("T3", "M"));
+    let found = report(&SAMPLE.replacen("## Member K1", &text, 1)).to_string();
+    assert!(found.contains("step T3.G01: expected L, as in other steps of this kind; found M"), "{found}");
+}
+
+#[test]
+fn a_step_keeps_to_its_combination() {
+    let table = |id: &str| format!("**Table {id}** Movements\n\n| end | u, mm |\n|---|---:|\n| end | 0.2976 |\n\n");
+    let with_table = SAMPLE.replacen("## Member T1", &format!("{}## Member T1", table("C2.U")), 1);
+    assert!(report(&with_table).ok());
+    let found = report(&with_table.replacen("u₂ C1.U.end.u", "u₂ C2.U.end.u", 1));
+    assert_eq!(found.findings.len(), 1, "{found}");
+    assert!(found.to_string().contains("expected operands of combination C1"), "{found}");
 }
 
 #[test]
