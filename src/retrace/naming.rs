@@ -32,21 +32,22 @@ pub(super) fn check_symbols(package: &Package, findings: &mut Vec<Finding>) {
 /// Combinations are known by their tables of displacements, `<combination>.U`.
 pub(super) fn check_combinations(package: &Package, findings: &mut Vec<Finding>) {
     let ids = package.tables.iter().filter_map(|table| table.id.as_deref());
-    let combinations: BTreeSet<&str> = ids.filter_map(|id| id.strip_suffix(".U")).collect();
+    let combinations: Vec<&str> = ids.filter_map(|id| id.strip_suffix(".U")).collect();
+    let known = |name: &str| combinations.iter().position(|known| *known == name);
     let of_step = |number: &str| match number.split('.').collect::<Vec<_>>().as_slice() {
-        [_, combination, _] => combinations.get(combination).copied(),
+        [_, combination, _] => known(combination),
         _ => None,
     };
     for step in &package.steps {
         let Some(own) = of_step(&step.number) else { continue };
         for (symbol, address) in &step.from {
             let of_cell = || match address.split('.').collect::<Vec<_>>().as_slice() {
-                [combination, _, _, _] => combinations.get(combination).copied(),
+                [combination, _, _, _] => known(combination),
                 _ => None,
             };
             if let Some(other) = of_step(address).or_else(of_cell).filter(|other| *other != own) {
-                let expected = format!("operands of combination {own}");
-                let found = format!("{symbol} of combination {other}, {address}");
+                let expected = format!("operands of combination {}", combinations[own]);
+                let found = format!("{symbol} of combination {}, {address}", combinations[other]);
                 findings.push(Finding::of(&step.number, step.from_line, expected, found));
             }
         }
