@@ -1,2 +1,6 @@
-//! The command line.
-fn main() {}
+//! The program; everything is in the library.
+use std::process::ExitCode;
+
+fn main() -> ExitCode {
+    calcsheaf::cli::run()
+}

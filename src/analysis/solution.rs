@@ -53,4 +53,6 @@ pub struct CriticalLoad {
     pub factor: f64,
     /// Per member, points along it (distance from `from`, m) with the movement in global x and y, scaled to 1 at most.
     pub mode: Vec<Vec<(f64, [f64; 2])>>,
+    /// Compressed bars whose section has no second moment of area: they lean but do not bow in this factor.
+    pub without_inertia: Vec<usize>,
 }

@@ -67,6 +67,13 @@ pub const UNIT_LOAD: Source =
 pub const FIRST_ORDER: Source =
     recalled("EN 1993-1-1", "EN 1993-1-1:2005, 5.2.1(3), limit of first-order elastic analysis");
 
+/// Comparison of a demand with a limit that the user took from the governing code.
+pub const ALLOWABLE: Source = Source {
+    short: "limit of the input",
+    full: "Allowable-stress and serviceability comparison, demand over limit; common practice, the limit is the user's",
+    recalled: false,
+};
+
 /// Every row of the table.
 pub const ALL: &[&Source] = &[
     &HOOKE,

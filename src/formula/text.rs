@@ -68,7 +68,7 @@ fn write(tree: &Tree, place: Place, leaf: &dyn Fn(&Symbol, Place) -> String) -> 
         Tree::Number(number) => number_text(*number),
         Tree::Pi => "π".into(),
         Tree::Symbol(symbol) => leaf(symbol, place),
-        Tree::Negative(part) => format!("−{}", write(part, Place::Factor, leaf)),
+        Tree::Negative(part) => format!("−{}", write(part, Place::Term, leaf)),
         Tree::Sum(parts) => {
             let mut text = String::new();
             for part in parts {

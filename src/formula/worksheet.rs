@@ -1,5 +1,6 @@
 //! Where formulas are worked: the same calls fill in results alone or write down every step.
 use super::{Definition, Symbol};
+use crate::units::Measure;
 use std::fmt;
 
 /// A worked value and the place where it is written down, if it is.
@@ -46,6 +47,30 @@ impl fmt::Display for StepNumber<'_> {
 pub trait Worksheet {
     /// Works one step. `operands` stand in the order of the definition's symbols.
     fn work(&mut self, number: StepNumber<'_>, definition: &Definition, operands: &[Value]) -> Value;
+
+    /// Works a step whose result is zero by nature, such as the balance of a node.
+    fn balance(&mut self, number: StepNumber<'_>, definition: &Definition, operands: &[Value]) -> Value {
+        self.work(number, definition, operands)
+    }
+
+    /// Works a step whose result is compared with a plain number, which it must not exceed.
+    fn compare(&mut self, number: StepNumber<'_>, definition: &Definition, operands: &[Value], limit: f64) -> Value {
+        let _ = limit;
+        self.work(number, definition, operands)
+    }
+
+    /// Says by what method or clause the last step was worked, and remarks on it.
+    fn remark(&mut self, by: Option<&str>, note: Option<&str>) {
+        let _ = (by, note);
+    }
+
+    /// A value of the input, under its address; the same address gives the same entry again.
+    fn input(&mut self, address: fmt::Arguments<'_>, si: f64, measure: Measure) -> Value;
+
+    /// A value that is stated and proved by the steps that use it, such as a movement.
+    ///
+    /// `size` is the largest of its kind beside it: what is far smaller counts as zero.
+    fn stated(&mut self, address: fmt::Arguments<'_>, si: f64, size: f64, measure: Measure) -> Value;
 }
 
 /// Computes and writes nothing down.
@@ -64,6 +89,14 @@ impl Worksheet for Silent {
             let values: Vec<f64> = operands.iter().map(|v| v.si).collect();
             Value::silent(definition.program().evaluate(&values))
         }
+    }
+
+    fn input(&mut self, _: fmt::Arguments<'_>, si: f64, _: Measure) -> Value {
+        Value::silent(si)
+    }
+
+    fn stated(&mut self, _: fmt::Arguments<'_>, si: f64, _: f64, _: Measure) -> Value {
+        Value::silent(si)
     }
 }
 
@@ -98,14 +131,36 @@ impl<'a> Scope<'a> {
 
     /// Works a definition whose symbols are all known, and makes its own symbol known.
     ///
-    /// A symbol that is not known counts as zero on a silent sheet; the tests of each kind see to it that none is.
+    /// A symbol that is not known makes the result not a number; the tests of each kind see to it that none is.
     pub fn work(&mut self, letter: char, nn: u16, definition: &Definition) -> Value {
-        let operands: Vec<Value> =
-            definition.program().symbols().iter().map(|s| self.get(s).unwrap_or(Value::silent(f64::NAN))).collect();
+        let operands = self.operands(definition);
         let number = StepNumber { subject: self.subject, combination: self.combination, letter, nn };
         let value = self.sheet.work(number, definition, &operands);
         self.set(definition.symbol(), value);
         value
+    }
+
+    /// Works a definition whose result is zero by nature.
+    pub fn balance(&mut self, letter: char, nn: u16, definition: &Definition) -> Value {
+        let operands = self.operands(definition);
+        let number = StepNumber { subject: self.subject, combination: self.combination, letter, nn };
+        self.sheet.balance(number, definition, &operands)
+    }
+
+    /// Works a definition whose result must not exceed `limit`.
+    pub fn compare(&mut self, letter: char, nn: u16, definition: &Definition, limit: f64) -> Value {
+        let operands = self.operands(definition);
+        let number = StepNumber { subject: self.subject, combination: self.combination, letter, nn };
+        self.sheet.compare(number, definition, &operands, limit)
+    }
+
+    fn operands(&self, definition: &Definition) -> Vec<Value> {
+        definition.program().symbols().iter().map(|s| self.get(s).unwrap_or(Value::silent(f64::NAN))).collect()
+    }
+
+    /// Makes known what another scope knows.
+    pub fn inherit(&mut self, known: &[(Symbol, Value)]) {
+        self.known.extend_from_slice(known);
     }
 
     /// Everything known, in order of appearance.

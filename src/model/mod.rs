@@ -1,8 +1,26 @@
 //! The structure as understood: every name resolved, every value in SI base units, nothing left to doubt.
 //!
 //! Indices (`usize`) point into the vectors of [`Model`], which keep the order of the file.
+mod build;
+mod keys;
+
+pub use build::{build, read, read_source};
+pub use keys::{Block, Key, Presence, Sign, Takes, blocks, shape_keys};
+
 use crate::catalogue::section::{Given, SectionKind};
+use crate::diagnostic::{Diagnostics, Source};
 use crate::units::{Measure, System, Unit};
+
+/// A file that can be used.
+#[derive(Clone)]
+pub struct Reading {
+    /// What it says.
+    pub model: Model,
+    /// What a reader should know, sorted by place.
+    pub warnings: Diagnostics,
+    /// Its text with the place of every value.
+    pub source: Source,
+}
 
 /// One structure with its loads, checks and paperwork.
 #[derive(Clone)]

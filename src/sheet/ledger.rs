@@ -30,6 +30,8 @@ pub struct Entry {
     pub unit: Unit,
     /// How its digits are decided.
     pub rule: Rule,
+    /// Its magnitude, or what it is small against where it is zero by nature; SI.
+    pub size: f64,
     /// Its printed form, in `unit`; settled by the error budget.
     pub printed: Printed,
 }
@@ -70,7 +72,14 @@ impl Ledger {
     pub fn enter(&mut self, address: String, value: f64, unit: Unit, rule: Rule) -> Value {
         let id = self.entries.len() as u32;
         self.by_address.entry(address.clone()).or_insert(id);
-        self.entries.push(Entry { address, value, unit, rule, printed: Printed { count: 0, place: 0 } });
+        self.entries.push(Entry {
+            address,
+            value,
+            unit,
+            rule,
+            size: value.abs(),
+            printed: Printed { count: 0, place: 0 },
+        });
         Value { si: value, id }
     }
 

@@ -1,10 +1,17 @@
 //! The calculation sheet as data: numbered steps, tables and figures, every operand with an address.
 //! It knows no Markdown and no PDF.
+mod chapter;
+mod compose;
+pub mod digits;
 mod ledger;
+mod recording;
 mod step;
 mod table;
 
+pub use chapter::{kind_word, quantity_text, ratio_text, sorted_checks};
+pub use compose::{Results, VirtualMovement, compose, is_worked, results};
 pub use ledger::{Entry, Ledger, Rule};
+pub use recording::{Recording, within};
 pub use step::{Comparison, Step};
 pub use table::{Cell, Column, Row, Table};
 

@@ -1,1 +1,10 @@
 //! The one test binary: published values, promises, diagnostics, packages, commands, tidiness of the house.
+mod commands;
+mod diagnostics;
+mod independent;
+mod laws;
+mod markdown;
+mod packages;
+mod promises;
+mod published;
+mod tidy;

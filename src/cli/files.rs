@@ -1,0 +1,57 @@
+//! Writes the files of a package: all of them appear, or the earlier ones stay as they were.
+use std::fs::{self, File};
+use std::io::{self, Write};
+use std::path::{Path, PathBuf};
+
+/// A file to be written.
+pub(super) struct Output {
+    /// Where it goes.
+    pub(super) path: PathBuf,
+    /// What it holds.
+    pub(super) bytes: Vec<u8>,
+}
+
+/// What could not be done, and to which file.
+pub(super) struct Fault {
+    pub(super) path: PathBuf,
+    pub(super) error: io::Error,
+}
+
+/// Writes every file beside its place, synced, then moves all into place.
+///
+/// # Errors
+/// A file cannot be written (no permission, no room): nothing has been replaced then.
+pub(super) fn write_all(outputs: &[Output]) -> Result<(), Fault> {
+    let mut written: Vec<PathBuf> = Vec::new();
+    for output in outputs {
+        let aside = aside(&output.path);
+        if let Err(error) = write_one(&aside, &output.bytes) {
+            written.push(aside);
+            written.iter().for_each(|path| drop(fs::remove_file(path)));
+            return Err(Fault { path: output.path.clone(), error });
+        }
+        written.push(aside);
+    }
+    for (output, aside) in outputs.iter().zip(&written) {
+        if let Err(error) = fs::rename(aside, &output.path) {
+            written.iter().for_each(|path| drop(fs::remove_file(path)));
+            return Err(Fault { path: output.path.clone(), error });
+        }
+    }
+    Ok(())
+}
+
+fn write_one(path: &Path, bytes: &[u8]) -> io::Result<()> {
+    if let Some(folder) = path.parent() {
+        fs::create_dir_all(folder)?;
+    }
+    let mut file = File::create(path)?;
+    file.write_all(bytes)?;
+    file.sync_all()
+}
+
+/// The name a file has until all are written: hidden, beside its place, told apart by process.
+fn aside(path: &Path) -> PathBuf {
+    let name = path.file_name().map_or_else(String::new, |name| name.to_string_lossy().into_owned());
+    path.with_file_name(format!(".{name}.{}.part", std::process::id()))
+}

@@ -1,0 +1,209 @@
+//! The comparison with limits and the sampling list, as the templates see them.
+use crate::document::{CheckFacts, CheckRow, Group, MatrixRow, SampleFact};
+use crate::model::{DeflectionCheck, Model};
+use crate::sheet::{Results, Sheet, ratio_text, sorted_checks};
+use crate::units::Measure;
+use crate::work::Check;
+use std::collections::BTreeSet;
+
+/// Every comparison.
+pub(super) fn facts(model: &Model, results: &Results, sheet: &Sheet) -> CheckFacts {
+    let checks = sorted_checks(results);
+    let rows: Vec<CheckRow> = checks.iter().map(|check| row(model, sheet, check)).collect();
+    let count = |wanted: Option<bool>| checks.iter().filter(|c| c.ok() == wanted).count();
+    let kinds = ["stress", "shear", "deflection", "buckling", "slenderness", "stability"];
+    let kinds: Vec<String> =
+        kinds.iter().filter(|kind| asked_for(model, kind)).map(|kind| (*kind).to_owned()).collect();
+    CheckFacts {
+        governing: rows.first().filter(|row| !row.ratio.is_empty()).cloned(),
+        within: count(Some(true)),
+        beyond: count(Some(false)),
+        not_checked: count(None),
+        matrix: matrix(model, &checks, &kinds),
+        kinds,
+        rows,
+        groups: groups(model, sheet),
+    }
+}
+
+fn asked_for(model: &Model, kind: &str) -> bool {
+    match kind {
+        "deflection" => !model.checks.deflection.is_empty(),
+        "buckling" => model.checks.buckling.is_some(),
+        "slenderness" => model.checks.slenderness.is_some(),
+        "stability" => model.checks.stability.is_some(),
+        _ => true,
+    }
+}
+
+fn row(model: &Model, sheet: &Sheet, check: &Check) -> CheckRow {
+    let quantity =
+        |si: Option<f64>| si.map_or(String::new(), |si| crate::sheet::quantity_text(&model.display, si, check.measure));
+    let step = check.step.as_deref().and_then(|number| sheet.step(number));
+    let ratio = match (check.ratio, step) {
+        (None, _) => String::new(),
+        (Some(_), Some(step)) => sheet.ledger.entry(step.result).printed.to_string(),
+        (Some(ratio), None) => ratio_text(ratio, model.display.digits),
+    };
+    let member = model.members.iter().find(|m| m.name == check.subject);
+    let source =
+        member.filter(|_| check.kind == "stress" || check.kind == "shear").and_then(|m| m.allowable.source.clone());
+    CheckRow {
+        id: check.id.clone(),
+        subject: check.subject.clone(),
+        kind: check.kind.clone(),
+        combination: check.combination.clone(),
+        place: check.place.map_or(String::new(), |x| {
+            format!("x = {}", crate::sheet::quantity_text(&model.display, x, Measure::Span))
+        }),
+        demand: quantity(check.demand),
+        limit: quantity(check.limit),
+        source: source.unwrap_or_default(),
+        ratio,
+        verdict: match check.ok() {
+            Some(true) => "OK",
+            Some(false) => "NOT OK",
+            None => "NOT CHECKED",
+        }
+        .into(),
+        why: check.why.clone().unwrap_or_default(),
+        address: step.map_or(String::new(), |step| step.number.clone()),
+    }
+}
+
+/// Every member, every node with a check and the whole, against every kind of check.
+fn matrix(model: &Model, checks: &[&Check], kinds: &[String]) -> Vec<MatrixRow> {
+    let of_kind = |kind: &str, wanted: &str| kind == wanted || kind.split('.').next() == Some(wanted);
+    let is_node = |check: &Check| check.kind.starts_with("deflection.");
+    let mut rows = Vec::new();
+    let mut add = |subject: &str, node: bool, why_not: &dyn Fn(&str) -> &'static str| {
+        let cells = kinds
+            .iter()
+            .map(|kind| {
+                let of: Vec<&&Check> = checks
+                    .iter()
+                    .filter(|c| c.subject == subject && is_node(c) == node && of_kind(&c.kind, kind))
+                    .collect();
+                if of.is_empty() {
+                    return why_not(kind).to_owned();
+                }
+                let unchecked = of.iter().filter(|c| c.ok().is_none()).count();
+                let worst = of.iter().filter_map(|c| c.ratio).fold(f64::NEG_INFINITY, f64::max);
+                let mut text = if worst.is_finite() {
+                    format!("{} {}", ratio_text(worst, 3), if worst > 1.0 { "BEYOND LIMIT" } else { "within" })
+                } else {
+                    String::new()
+                };
+                if unchecked > 0 {
+                    let all =
+                        if unchecked == of.len() { String::new() } else { format!(" in {unchecked} of {}", of.len()) };
+                    text =
+                        if text.is_empty() { format!("NOT CHECKED{all}") } else { format!("{text}; NOT CHECKED{all}") };
+                }
+                text
+            })
+            .collect();
+        rows.push(MatrixRow { subject: subject.to_owned(), cells });
+    };
+    for (at, member) in model.members.iter().enumerate() {
+        let bends = crate::work::carries_shear(member.kind);
+        let checks = &model.checks;
+        add(&member.name, false, &|kind| match kind {
+            "stress" if !checks.stress.covers(at) => "NOT CHECKED: switched off",
+            "shear" if !bends => "– (a bar carries no shear)",
+            "shear" if !checks.shear.covers(at) => "NOT CHECKED: switched off",
+            "deflection" => "NOT CHECKED: no limit given",
+            "buckling" | "slenderness" if !bends || member.kind == crate::model::MemberKind::Frame => {
+                "– (not compressed)"
+            }
+            "buckling" | "slenderness" => "– (no axial force)",
+            "stability" => "– (of the whole)",
+            _ => "NOT CHECKED: no combination is for it",
+        });
+    }
+    let mut nodes = BTreeSet::new();
+    for check in &model.checks.deflection {
+        if let DeflectionCheck::Node { node, .. } = check
+            && nodes.insert(*node)
+        {
+            add(&model.nodes[*node].name, true, &|kind| {
+                if kind == "deflection" { "NOT CHECKED: no combination is for it" } else { "– (of members)" }
+            });
+        }
+    }
+    if model.checks.stability.is_some() {
+        add("structure", false, &|kind| {
+            if kind == "stability" { "NOT CHECKED: no combination is for it" } else { "– (of members)" }
+        });
+    }
+    rows
+}
+
+/// Comparisons that stand on no member sheet.
+fn groups(model: &Model, sheet: &Sheet) -> Vec<Group> {
+    let of = |wanted: &dyn Fn(&str) -> bool| -> Vec<String> {
+        sheet
+            .steps
+            .iter()
+            .filter(|step| step.comparison.is_some() && wanted(&step.number))
+            .map(|step| step.number.clone())
+            .collect()
+    };
+    let node_step = |number: &str| number.rsplit('.').next().is_some_and(|last| last.starts_with("C8"));
+    let whole_step = |number: &str| number.starts_with("structure.") && number.ends_with(".C51");
+    let _ = model;
+    [("Movements of nodes", of(&node_step)), ("Stability of the whole", of(&whole_step))]
+        .into_iter()
+        .filter(|(_, steps)| !steps.is_empty())
+        .map(|(title, steps)| Group { title: title.into(), steps, ..Group::default() })
+        .collect()
+}
+
+/// What the checker should confirm at least, chosen by rule and not by the originator.
+///
+/// All governing comparisons, each distinct formula once, everything above 0.8, and a tenth of the rest drawn by the
+/// input's fingerprint. The shares are common practice.
+pub(super) fn sample(results: &Results, sheet: &Sheet, sha256: &str) -> Vec<SampleFact> {
+    let mut chosen: Vec<SampleFact> = Vec::new();
+    let mut seen = BTreeSet::new();
+    let mut add = |number: &str, why: &str| {
+        if let Some(step) = sheet.step(number)
+            && seen.insert(number.to_owned())
+        {
+            let what = step.definition.title().to_owned();
+            chosen.push(SampleFact { address: number.to_owned(), what, why: why.to_owned() });
+        }
+    };
+    let mut subjects = BTreeSet::new();
+    for check in sorted_checks(results) {
+        let Some(number) = &check.step else { continue };
+        if subjects.insert(check.subject.clone()) {
+            add(number, "governs its member or node");
+        } else if check.ratio.is_some_and(|ratio| ratio > 0.8) {
+            add(number, "utilisation above 0.8");
+        }
+    }
+    let mut formulas = BTreeSet::new();
+    for step in &sheet.steps {
+        let letter = step.number.rsplit('.').next().and_then(|last| last.chars().next()).unwrap_or(' ');
+        let shape = match letter {
+            // Balances differ in their number of terms alone.
+            'N' | 'R' => format!("{letter}{}", step.definition.symbol()),
+            _ => format!("{} = {}", step.definition.symbol(), crate::formula::with_symbols(step.definition.tree())),
+        };
+        if formulas.insert(shape) {
+            add(&step.number, "first use of this formula");
+        }
+    }
+    for step in &sheet.steps {
+        // A tenth, by the fingerprint and the step's own number: other steps do not move the draw.
+        let mut hash: u64 = 0xcbf2_9ce4_8422_2325;
+        for byte in sha256.bytes().chain(step.number.bytes()) {
+            hash = (hash ^ u64::from(byte)).wrapping_mul(0x0100_0000_01b3);
+        }
+        if (hash ^ (hash >> 32)) % 10 == 0 {
+            add(&step.number, "drawn by the fingerprint");
+        }
+    }
+    chosen
+}

@@ -1,0 +1,44 @@
+//! The confirmation of a whole package.
+use super::package::Package;
+use super::report::{Coverage, Report};
+use super::trace::Addresses;
+use super::{closing, fingerprint, naming, quote, verdict};
+use std::collections::BTreeSet;
+
+/// Confirms every line of a package; with the input at hand also that the package belongs to it.
+///
+/// A step closes when its printed operands, with their units, give the printed result within 1 unit of its last place;
+/// a millionth of that unit and 1e-13 of the result are left to binary arithmetic. What cannot be confirmed is a
+/// finding: nothing is passed over in silence but prose, whose numbers are counted.
+#[must_use]
+pub fn confirm(package: &Package, input: Option<&str>) -> Report {
+    let mut findings = package.faults.clone();
+    let mut remarks = package.remarks.clone();
+    let mut coverage = Coverage {
+        steps: package.steps.len() + package.unread_steps,
+        loose_numbers: package.loose_numbers,
+        ..Coverage::default()
+    };
+    let mut addresses = Addresses::new(package, &mut findings);
+    let typed = package.echo.as_ref().map_or(Vec::new(), |echo| echo.numbers());
+    let is_input = |number: f64| typed.binary_search_by(|known| known.total_cmp(&number)).is_ok();
+    for step in &package.steps {
+        let operands = closing::check(step, &is_input, &mut findings);
+        coverage.operands += step.from.len();
+        coverage.operands_traced += addresses.trace(step, &operands, &mut findings);
+    }
+    addresses.chains(&mut findings, &mut coverage);
+    let mut confirmed = addresses.drawn_cells().clone();
+    naming::check_symbols(package, &mut findings);
+    naming::check_combinations(package, &mut findings);
+    naming::check_cells(package, &mut confirmed, &mut findings);
+    quote::check(package, &mut confirmed, &mut findings, &mut coverage);
+    coverage.table_numbers_confirmed = confirmed.len();
+    verdict::check(package, &mut findings, &mut remarks, &mut coverage);
+    fingerprint::check(package, input, &mut findings);
+    findings.sort();
+    findings.dedup();
+    let faulty: BTreeSet<&str> = findings.iter().filter_map(|finding| finding.step.as_deref()).collect();
+    coverage.steps_confirmed = package.steps.iter().filter(|step| !faulty.contains(step.number.as_str())).count();
+    Report { findings, remarks, coverage }
+}

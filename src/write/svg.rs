@@ -1,0 +1,4 @@
+//! temporary
+pub fn write(f: &crate::figure::Figure) -> String {
+    f.id.clone()
+}
