@@ -15,8 +15,12 @@ const DOTS: f32 = 4.4;
 /// Sets a line for each heading of a part, and for those below it.
 pub(super) fn set(document: &Document, setter: &mut Setter<'_>, g: &Geometry) -> Vec<Slab> {
     let mut slabs = Vec::new();
-    for block in &document.blocks {
+    for (at, block) in document.blocks.iter().enumerate() {
         let Block::Heading { level, text, anchor } = block else { continue };
+        // The table does not list its own heading.
+        if matches!(document.blocks.get(at + 1), Some(Block::Contents)) {
+            continue;
+        }
         let (left, face, before) = match level {
             2 => (g.text, FaceName::Bold, 5.0),
             3 => (g.text + 14.0, FaceName::Regular, 0.0),
@@ -31,7 +35,8 @@ pub(super) fn set(document: &Document, setter: &mut Setter<'_>, g: &Geometry) ->
             words.set(setter, &mut frame, line, left, BASELINE);
             if at + 1 == count {
                 leader(&mut frame, end + 5.0, g.right - NUMBER);
-                frame.slots.push(Slot { right: g.right, y: BASELINE, size: TEXT, to: anchor.as_str().into() });
+                let item = frame.items.len();
+                frame.slots.push(Slot { right: g.right, y: BASELINE, size: TEXT, to: anchor.as_str().into(), item });
             }
             let (y, height) = (BASELINE - TEXT * 0.85, LEADING);
             frame.links.push(Link { x: left, y, width: g.right - left, height, to: anchor.as_str().into() });

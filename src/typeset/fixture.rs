@@ -5,6 +5,13 @@ use crate::formula::{Definition, Symbol, Tree, source};
 use crate::sheet::{Cell, Column, Comparison, Row, Rule, Sheet, Step, Table};
 use crate::units::{Measure, Printed, Unit, parse_unit};
 
+/// The built-in fonts, read once for all tests.
+#[cfg(test)]
+pub(crate) fn fonts() -> &'static super::Fonts {
+    static FONTS: std::sync::LazyLock<super::Fonts> = std::sync::LazyLock::new(super::Fonts::built_in);
+    &FONTS
+}
+
 fn unit(text: &str) -> Unit {
     parse_unit(text).unwrap_or_else(|_| Unit::none())
 }

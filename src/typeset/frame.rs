@@ -103,6 +103,8 @@ pub struct Slot {
     pub size: f32,
     /// A heading's anchor.
     pub to: Box<str>,
+    /// The frame's item before which it is read.
+    pub item: usize,
 }
 
 /// Things placed together.
@@ -118,6 +120,8 @@ pub struct Frame {
     pub anchors: Vec<Anchor>,
     /// Numbers of sheets still to be filled in.
     pub slots: Vec<Slot>,
+    /// Texts begun with [`Self::speak`] and not yet ended.
+    speaking: u8,
 }
 
 impl Frame {
@@ -135,9 +139,44 @@ impl Frame {
         }
     }
 
+    /// Makes items smaller about the left end `x` of the baseline y = 0.
+    pub fn scale(&mut self, items: std::ops::Range<usize>, x: f32, factor: f32) {
+        for item in self.items.get_mut(items).into_iter().flatten() {
+            match item {
+                Item::Run(run) => {
+                    run.x = x + (run.x - x) * factor;
+                    run.y *= factor;
+                    run.width *= factor;
+                    run.size *= factor;
+                }
+                Item::Rule(rule) => {
+                    rule.x = x + (rule.x - x) * factor;
+                    rule.y *= factor;
+                    rule.width *= factor;
+                    rule.height *= factor;
+                }
+                _ => {}
+            }
+        }
+    }
+
+    /// Parts the frame: everything placed since `from` becomes a frame of its own.
+    pub fn split_off(&mut self, from: usize) -> Self {
+        let mut other = Self { items: self.items.split_off(from), ..Self::default() };
+        for item in &mut other.items {
+            if let Item::Run(run) = item {
+                let glyphs = &self.glyphs[run.first as usize..(run.first + run.count) as usize];
+                run.first = other.glyphs.len() as u32;
+                other.glyphs.extend_from_slice(glyphs);
+            }
+        }
+        other
+    }
+
     /// Takes over another frame, moved.
     pub fn append(&mut self, other: Self, dx: f32, dy: f32) {
         let offset = self.glyphs.len() as u32;
+        let items = self.items.len();
         self.glyphs.extend_from_slice(&other.glyphs);
         self.items.extend(other.items.into_iter().map(|mut item| {
             shift(&mut item, dx, dy);
@@ -147,8 +186,29 @@ impl Frame {
             item
         }));
         self.links.extend(other.links.into_iter().map(|link| Link { x: link.x + dx, y: link.y + dy, ..link }));
-        self.slots.extend(other.slots.into_iter().map(|slot| Slot { right: slot.right + dx, y: slot.y + dy, ..slot }));
+        self.slots.extend(other.slots.into_iter().map(|slot| Slot {
+            right: slot.right + dx,
+            y: slot.y + dy,
+            item: slot.item + items,
+            ..slot
+        }));
         self.anchors.extend(other.anchors.into_iter().map(|anchor| Anchor { y: anchor.y + dy, ..anchor }));
+    }
+
+    /// What is placed from now on is read back as `text`; within another such text this one is not said again.
+    pub fn speak(&mut self, text: &str) {
+        if self.speaking == 0 {
+            self.items.push(Item::Spoken(text.into()));
+        }
+        self.speaking += 1;
+    }
+
+    /// Ends what [`Self::speak`] began.
+    pub fn end_speech(&mut self) {
+        self.speaking = self.speaking.saturating_sub(1);
+        if self.speaking == 0 {
+            self.items.push(Item::SpokenEnd);
+        }
     }
 
     /// Places a rectangle.

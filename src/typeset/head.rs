@@ -9,6 +9,8 @@ use crate::document::RunningHead;
 const TITLE: f32 = 10.5;
 const LABEL: f32 = 6.2;
 const VALUE: f32 = 8.4;
+/// Type of the marks that a sheet must not be taken without.
+const MARK: Type = Type { face: FaceName::Bold, size: 8.0, grey: 255 };
 
 /// Places head and checker's column on a sheet.
 pub(super) fn set(
@@ -25,14 +27,18 @@ pub(super) fn set(
     let bold = Type::new(FaceName::Bold, TITLE);
     let sheet_width = setter.width(&sheet, bold);
     let baseline = top + 14.5;
-    let mut right = g.edge - sheet_width;
-    setter.set(frame, &sheet, bold, right, baseline);
-    for (shown, words) in [(head.preliminary, "PRELIMINARY"), (head.beyond_limit, "BEYOND LIMIT")] {
-        if shown {
-            right = mark(words, setter, frame, right - 12.0, baseline);
-        }
+    let marks: Vec<&str> = [(head.preliminary, "PRELIMINARY"), (head.beyond_limit, "BEYOND LIMIT")]
+        .into_iter()
+        .filter_map(|(shown, words)| shown.then_some(words))
+        .collect();
+    let marks_width: f32 = marks.iter().map(|words| setter.width(words, MARK) + 10.0 + 12.0).sum();
+    let right = g.edge - sheet_width;
+    fitted(&head.title, bold, right - marks_width - 14.0 - g.left, setter, frame, [g.left, baseline]);
+    let mut x = right - marks_width;
+    for words in marks {
+        x = mark(words, setter, frame, x, baseline) + 12.0;
     }
-    fitted(&head.title, bold, right - 14.0 - g.left, setter, frame, [g.left, baseline]);
+    setter.set(frame, &sheet, bold, right, baseline);
 
     let cells = [
         ("part", head.part.as_str(), 0.30),
@@ -54,19 +60,18 @@ pub(super) fn set(
     checker(setter, frame, g, baseline + 29.0);
 }
 
-/// White on black, ending at `right`; gives its left end.
-fn mark(words: &str, setter: &mut Setter<'_>, frame: &mut Frame, right: f32, baseline: f32) -> f32 {
-    let kind = Type { grey: 255, ..Type::new(FaceName::Bold, 8.0) };
-    let width = setter.width(words, kind) + 10.0;
-    frame.rule(right - width, baseline - 9.0, width, 12.0);
-    setter.set(frame, words, kind, right - width + 5.0, baseline - 0.4);
-    right - width
+/// White on black, from `left` on; gives its right end.
+fn mark(words: &str, setter: &mut Setter<'_>, frame: &mut Frame, left: f32, baseline: f32) -> f32 {
+    let width = setter.width(words, MARK) + 10.0;
+    frame.rule(left, baseline - 9.0, width, 12.0);
+    setter.set(frame, words, MARK, left + 5.0, baseline - 0.4);
+    left + width
 }
 
 /// The column in which a checker ticks and signs, and the line on which the sheet is signed.
 fn checker(setter: &mut Setter<'_>, frame: &mut Frame, g: &Geometry, top: f32) {
     let label = Type { grey: 70, ..Type::new(FaceName::Regular, LABEL) };
-    frame.rule(g.check, top, 0.4, g.bottom + 22.0 - top);
+    frame.rule(g.check, top, 0.3, g.bottom + 22.0 - top);
     setter.set(frame, "checker", label, g.check + 8.0, top + 9.0);
     let foot = g.bottom + 20.0;
     setter.set(frame, "sheet", label, g.check + 8.0, foot - 2.0);

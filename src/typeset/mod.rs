@@ -121,13 +121,17 @@ fn collect_places(sheets: &[Frame], places: &mut BTreeMap<Box<str>, Spot>) {
     }
 }
 
+/// Puts the numbers of sheets where they are read: after the words they belong to.
 fn fill_slots(frame: &mut Frame, pages: &Pages, setter: &mut Setter<'_>) {
-    for slot in std::mem::take(&mut frame.slots) {
+    for slot in std::mem::take(&mut frame.slots).into_iter().rev() {
         if let Some(spot) = pages.spot(&slot.to) {
             let number = (spot.sheet + 1).to_string();
             let kind = Type::new(FaceName::Regular, slot.size);
             let width = setter.width(&number, kind);
+            let end = frame.items.len();
             setter.set(frame, &number, kind, slot.right - width, slot.y);
+            let set = frame.items.split_off(end);
+            frame.items.splice(slot.item..slot.item, set);
         }
     }
 }
@@ -158,3 +162,6 @@ fn words(inlines: &[Inline]) -> String {
     }
     text
 }
+
+#[cfg(test)]
+mod tests;

@@ -120,11 +120,14 @@ impl Paragraph {
     fn pieces(&self, start: usize, end: usize) -> impl Iterator<Item = (&str, Span)> {
         let first = self.spans.partition_point(|span| span.end <= start);
         let mut at = start;
+        // Spans may be empty, where white space met white space.
         self.spans[first..].iter().map_while(move |span| {
-            let to = span.end.min(end);
-            let piece = (at < to).then(|| (&self.text[at..to], *span));
-            at = to.max(at);
-            piece
+            if at >= end {
+                return None;
+            }
+            let from = at;
+            at = span.end.min(end).max(at);
+            Some((&self.text[from..at], *span))
         })
     }
 
@@ -264,11 +267,11 @@ pub(super) const fn body_type() -> Type {
 #[cfg(test)]
 mod tests {
     use super::*;
-    use crate::typeset::Fonts;
+    use crate::typeset::fixture;
 
     fn set_lines(text: &str, room: f32) -> (Vec<TextLine>, Vec<String>) {
-        let fonts = Fonts::built_in();
-        let setter = Setter::new(&fonts);
+        let fonts = fixture::fonts();
+        let setter = Setter::new(fonts);
         let paragraph = Paragraph::plain(text, body_type());
         let lines = paragraph.lines(&setter, room);
         let words = lines.iter().map(|line| paragraph.text[line.start..line.end].to_string()).collect();

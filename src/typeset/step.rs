@@ -19,6 +19,9 @@ const EQUALS: f32 = 15.0;
 const INDENT: f32 = 16.0;
 /// Space between two lines of formula, and above the first.
 const BETWEEN: f32 = 4.6;
+/// Column of the labels of fine print, and its distance from line to line over its size.
+const LABEL: f32 = 22.0;
+const FINE_LEADING: f32 = 1.42;
 /// Space below a step.
 const BELOW: f32 = 13.0;
 
@@ -83,7 +86,7 @@ impl StepPage<'_, '_> {
         let symbol = step.definition.symbol();
 
         let mut frame = Frame::default();
-        frame.items.push(Item::Spoken(format!("{symbol} = {}", with_symbols(tree)).into()));
+        frame.speak(&format!("{symbol} = {}", with_symbols(tree)));
         let mut maths = Maths { setter: self.setter, frame: &mut frame };
         let left = maths.symbol(symbol, None, FORMULA);
         let (left_width, left_height, left_depth) = (left.width, left.height, left.depth);
@@ -91,7 +94,7 @@ impl StepPage<'_, '_> {
         let equals = self.geometry.text + (left_width + 5.0).max(LEFT_SIDE);
         let lines =
             self.side(&mut frame, equals, |maths, width| maths.lines(tree, Filling::Symbols, FORMULA, width, INDENT));
-        self.stack(frame, &lines, 1, left_height, left_depth);
+        self.stack(frame, &lines, left_height, left_depth);
 
         let mut frame = Frame::default();
         let spoken = with_numbers(tree, &|symbol| {
@@ -103,12 +106,12 @@ impl StepPage<'_, '_> {
                 |entry| entry.operand(),
             )
         });
-        frame.items.push(Item::Spoken(format!("= {spoken}").into()));
+        frame.speak(&format!("= {spoken}"));
         let number = |symbol: &Symbol| entry_of(symbol).map(|entry| (entry.printed, &*entry.unit.text));
         let lines = self.side(&mut frame, equals, |maths, width| {
             maths.lines(tree, Filling::Numbers(&number), FORMULA, width, INDENT)
         });
-        self.stack(frame, &lines, 1, 0.0, 0.0);
+        self.stack(frame, &lines, 0.0, 0.0);
         self.result(step, equals);
     }
 
@@ -133,19 +136,24 @@ impl StepPage<'_, '_> {
     }
 
     /// Turns the lines of a formula, all still on one baseline, into strips one below the other.
-    fn stack(&mut self, mut frame: Frame, lines: &[Line], spoken: usize, height: f32, depth: f32) {
-        let mut y = BETWEEN;
-        for (at, line) in lines.iter().enumerate() {
-            let up = line.height.max(0.72 * FORMULA).max(if at == 0 { height } else { 0.0 });
-            let baseline = y + up;
-            let from = if at == 0 { spoken } else { line.from };
-            for item in from..line.to {
-                frame.shift_one(item, 0.0, baseline);
+    ///
+    /// The first strip is read back as the whole formula, the others as nothing.
+    fn stack(&mut self, mut frame: Frame, lines: &[Line], height: f32, depth: f32) {
+        let first = self.slabs.len();
+        for (at, line) in lines.iter().enumerate().rev() {
+            let mut part = if at > 0 { frame.split_off(line.from) } else { std::mem::take(&mut frame) };
+            let [above, below] = if at > 0 { [0.0; 2] } else { [height, depth] };
+            let baseline = BETWEEN + line.height.max(0.72 * FORMULA).max(above);
+            part.shift(0, 0.0, baseline);
+            if at > 0 {
+                part.items.insert(0, Item::Spoken("".into()));
+                part.items.push(Item::SpokenEnd);
+            } else {
+                part.end_speech();
             }
-            y = baseline + line.depth.max(0.2 * FORMULA).max(if at == 0 { depth } else { 0.0 }) + BETWEEN * 0.7;
+            let height = baseline + line.depth.max(0.2 * FORMULA).max(below);
+            self.slabs.insert(first, Slab { frame: part, height, ..Slab::default() });
         }
-        frame.items.push(Item::SpokenEnd);
-        self.push(frame, y - BETWEEN * 0.7, 0.0);
     }
 
     fn result(&mut self, step: &Step, equals: f32) {
@@ -154,7 +162,7 @@ impl StepPage<'_, '_> {
         let mut frame = Frame::default();
         let baseline = BETWEEN + 0.8 * FORMULA;
         let compared = step.comparison.map(|c| format!(" {} {} {}", c.relation(), number(c.limit), c.verdict()));
-        frame.items.push(Item::Spoken(format!("= {value}{}", compared.as_deref().unwrap_or("")).into()));
+        frame.speak(&format!("= {value}{}", compared.as_deref().unwrap_or("")));
         let mut maths = Maths { setter: self.setter, frame: &mut frame };
         let sign = maths.text("= ", FORMULA);
         frame.shift(sign.from, equals, baseline);
@@ -173,7 +181,7 @@ impl StepPage<'_, '_> {
             }
             self.setter.set(&mut frame, comparison.verdict(), kind, x, baseline);
         }
-        frame.items.push(Item::SpokenEnd);
+        frame.end_speech();
         self.push(frame, baseline + 0.3 * FORMULA, 0.0);
     }
 
@@ -185,16 +193,17 @@ impl StepPage<'_, '_> {
         let g = *self.geometry;
         let fine = Type::new(FaceName::Regular, FINE);
         let mut frame = Frame::default();
-        let leading = FINE * 1.42;
-        let first = BETWEEN + FINE;
-        let mut y = first;
-        let mut x = g.text + self.setter.set(&mut frame, "from ", Type::new(FaceName::Italic, FINE), g.text, y) + 4.0;
-        let left = x;
+        let leading = FINE * FINE_LEADING;
+        let mut y = BETWEEN + FINE;
+        self.setter.set(&mut frame, "from", Type::new(FaceName::Italic, FINE), g.text, y);
+        let left = g.text + LABEL;
+        let mut x = left;
         for (at, (symbol, id)) in step.operands.iter().enumerate() {
             let address = &self.sheet.ledger.entry(*id).address;
-            let mut maths = Maths { setter: self.setter, frame: &mut frame };
-            let set = maths.symbol(symbol, None, FINE);
-            let gap = maths.text(" ", FINE);
+            frame.speak(symbol.as_str());
+            let set = Maths { setter: self.setter, frame: &mut frame }.symbol(symbol, None, FINE);
+            frame.end_speech();
+            let gap = Maths { setter: self.setter, frame: &mut frame }.text(" ", FINE);
             let (from, to, mut width) = (set.from, gap.from + 1, set.width + gap.width);
             width += self.setter.width(address, fine);
             if x + width > g.right && x > left {
@@ -208,7 +217,7 @@ impl StepPage<'_, '_> {
             at_x = self.address(&mut frame, address, fine, [at_x, left], &mut y, leading);
             x = at_x;
             if at + 1 < step.operands.len() {
-                x += self.setter.set(&mut frame, "  · ", fine, x, y);
+                x += 1.5 + self.setter.set(&mut frame, " · ", fine, x + 1.5, y) + 1.5;
             }
         }
         self.push(frame, y + 0.25 * FINE, 0.0);
@@ -245,20 +254,29 @@ impl StepPage<'_, '_> {
         let source = step.definition.source().map(|source| source.short);
         let by: Vec<&str> = source.into_iter().chain(step.by.as_deref()).collect();
         let by = (!by.is_empty()).then(|| by.join("; "));
-        for (label, text) in [("by ", by.as_deref()), ("note ", step.note.as_deref())] {
+        for (label, text) in [("by", by.as_deref()), ("note", step.note.as_deref())] {
             let Some(text) = text else { continue };
-            let mut paragraph = Paragraph::default();
-            paragraph.add(label, Type::new(FaceName::Italic, FINE), None);
-            paragraph.add(" ", Type::new(FaceName::Regular, FINE), None);
-            paragraph.add(text, Type::new(FaceName::Regular, FINE), None);
-            let (left, leading) = (self.geometry.text, FINE * 1.42);
-            for line in paragraph.lines(self.setter, self.geometry.right - left) {
-                let mut frame = Frame::default();
-                paragraph.set(self.setter, &mut frame, line, left, leading - 0.25 * FINE);
-                self.push(frame, leading, 0.0);
-            }
+            let paragraph = Paragraph::plain(text, Type::new(FaceName::Regular, FINE));
+            self.slabs.extend(labelled(label, &paragraph, self.setter, self.geometry));
         }
     }
+}
+
+/// Fine print beside its label, in the same column as a step's addresses.
+pub(super) fn labelled(label: &str, text: &Paragraph, setter: &mut Setter<'_>, g: &Geometry) -> Vec<Slab> {
+    let leading = FINE * FINE_LEADING;
+    let baseline = leading - 0.25 * FINE;
+    let left = g.text + LABEL;
+    let mut slabs = Vec::new();
+    for (at, line) in text.lines(setter, g.right - left).into_iter().enumerate() {
+        let mut frame = Frame::default();
+        if at == 0 {
+            setter.set(&mut frame, label, Type::new(FaceName::Italic, FINE), g.text, baseline);
+        }
+        text.set(setter, &mut frame, line, left, baseline);
+        slabs.push(Slab { frame, height: leading, ..Slab::default() });
+    }
+    slabs
 }
 
 /// A square to tick and a line for initials, in the checker's column.

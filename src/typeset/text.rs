@@ -6,20 +6,20 @@ use std::collections::BTreeSet;
 /// Sets text; remembers the characters that no face has.
 pub(super) struct Setter<'a> {
     /// The faces.
-    pub fonts: &'a Fonts,
+    pub(super) fonts: &'a Fonts,
     /// Characters that no face has.
-    pub missing: BTreeSet<char>,
+    pub(super) missing: BTreeSet<char>,
 }
 
 /// Face, size and grey of a text.
 #[derive(Debug, Clone, Copy, PartialEq)]
 pub(super) struct Type {
     /// Face.
-    pub face: FaceName,
+    pub(super) face: FaceName,
     /// Size, points.
-    pub size: f32,
+    pub(super) size: f32,
     /// 0 black to 255 white.
-    pub grey: u8,
+    pub(super) grey: u8,
 }
 
 impl Type {
@@ -78,6 +78,7 @@ impl<'a> Setter<'a> {
     /// Places a text with its left end at `x` on the baseline `y`; gives its advance.
     pub(super) fn set(&mut self, frame: &mut Frame, text: &str, kind: Type, x: f32, y: f32) -> f32 {
         let mut open: Option<(Run, f32)> = None;
+        let mut script = String::new();
         let mut at = x;
         let mut before = 0;
         for character in text.chars() {
@@ -88,7 +89,7 @@ impl<'a> Setter<'a> {
                 }
                 Found::Nothing => continue,
                 Found::Missing => {
-                    close(frame, open.take());
+                    close(frame, open.take(), &mut script);
                     before = 0;
                     self.missing.insert(character);
                     at += self.substitute(frame, character, kind, at, y);
@@ -100,7 +101,7 @@ impl<'a> Setter<'a> {
                 run.face == name && run.size.to_bits() == size.to_bits() && r.to_bits() == rise.to_bits()
             });
             if !same {
-                close(frame, open.take());
+                close(frame, open.take(), &mut script);
                 before = 0;
                 let first = frame.glyphs.len() as u32;
                 let run = Run { face: name, size, x: at, y: y - rise, width: 0.0, first, count: 0, grey: kind.grey };
@@ -112,6 +113,9 @@ impl<'a> Setter<'a> {
             {
                 last.after += kern;
             }
+            if size < kind.size {
+                script.push(character);
+            }
             frame.glyphs.push(Glyph { id: glyph, after: 0 });
             let advance = f32::from(face.advance(glyph) + kern) * size / 1000.0;
             at += advance;
@@ -121,7 +125,7 @@ impl<'a> Setter<'a> {
             }
             before = glyph;
         }
-        close(frame, open);
+        close(frame, open, &mut script);
         at - x
     }
 
@@ -159,7 +163,7 @@ impl<'a> Setter<'a> {
         let code = format!("{:04X}", character as u32);
         let (upper, lower) = code.split_at(code.len() / 2);
         let width = missing_width(character) * kind.size;
-        frame.items.push(Item::Spoken(character.to_string().into()));
+        frame.speak(character.encode_utf8(&mut [0; 4]));
         let small = Type { face: FaceName::Mono, size: kind.size * 0.36, grey: kind.grey };
         for (text, drop) in [(upper, 0.42), (lower, 0.06)] {
             let left = x + (width - self.width(text, small)) / 2.0;
@@ -167,7 +171,7 @@ impl<'a> Setter<'a> {
         }
         let inset = 0.06 * kind.size;
         frame.outline(x + inset, y - 0.76 * kind.size, width - 2.0 * inset, 0.8 * kind.size, 0.04 * kind.size);
-        frame.items.push(Item::SpokenEnd);
+        frame.end_speech();
         width
     }
 }
@@ -177,9 +181,16 @@ fn missing_width(character: char) -> f32 {
     if character as u32 > 0xffff { 0.88 } else { 0.66 }
 }
 
-fn close(frame: &mut Frame, run: Option<(Run, f32)>) {
-    if let Some((run, _)) = run {
+/// Places a run that is complete; scripts are read back as the characters they were written with.
+fn close(frame: &mut Frame, run: Option<(Run, f32)>, script: &mut String) {
+    let Some((run, _)) = run else { return };
+    if script.is_empty() {
         frame.items.push(Item::Run(run));
+    } else {
+        frame.speak(script);
+        frame.items.push(Item::Run(run));
+        frame.end_speech();
+        script.clear();
     }
 }
 
@@ -201,11 +212,12 @@ fn script(character: char) -> Option<Found> {
 #[cfg(test)]
 mod tests {
     use super::*;
+    use crate::typeset::fixture;
 
     #[test]
     fn measured_and_placed_widths_agree() {
-        let fonts = Fonts::built_in();
-        let mut setter = Setter::new(&fonts);
+        let fonts = fixture::fonts();
+        let mut setter = Setter::new(fonts);
         for text in ["AVATAR To", "10⁻³ m²", "Größe Żółć Ωμέγα Привет", "κ₁ ≤ 0.5", "日本", "a\u{ad}b"]
         {
             let kind = Type::new(FaceName::Regular, 10.0);
@@ -218,9 +230,9 @@ mod tests {
 
     #[test]
     fn superscripts_are_small_and_raised() {
-        let fonts = Fonts::built_in();
+        let fonts = fixture::fonts();
         let mut frame = Frame::default();
-        Setter::new(&fonts).set(&mut frame, "m⁻³", Type::new(FaceName::Bold, 10.0), 0.0, 0.0);
+        Setter::new(fonts).set(&mut frame, "m⁻³", Type::new(FaceName::Bold, 10.0), 0.0, 0.0);
         let runs: Vec<&Run> =
             frame.items.iter().filter_map(|item| if let Item::Run(run) = item { Some(run) } else { None }).collect();
         assert_eq!(runs.len(), 2);

@@ -150,12 +150,12 @@ fn read_constants(table: &ttf_parser::math::Constants<'_>, em: f32) -> Constants
 
 #[cfg(test)]
 mod tests {
-    use crate::typeset::{FaceName, Fonts};
+    use crate::typeset::{FaceName, fixture};
 
     /// The MATH table of TeX Gyre Pagella Math has its axis at 250 and fraction rules of 60 units of 1000.
     #[test]
     fn constants_are_those_of_the_face() {
-        let fonts = Fonts::built_in();
+        let fonts = fixture::fonts();
         assert!((fonts.maths.constants.axis_height - 0.25).abs() < 1e-6);
         assert!((fonts.maths.constants.fraction_rule - 0.06).abs() < 1e-6);
         let face = fonts.face(FaceName::Math);
@@ -165,7 +165,7 @@ mod tests {
 
     #[test]
     fn brackets_and_the_root_grow() {
-        let fonts = Fonts::built_in();
+        let fonts = fixture::fonts();
         for character in ['(', ')', '|', '√'] {
             let growth = fonts.maths.growth(character).cloned().unwrap_or_default();
             assert!(growth.variants.len() > 1, "{character}");

@@ -159,11 +159,12 @@ impl Fonts {
 #[cfg(test)]
 mod tests {
     use super::*;
+    use crate::typeset::fixture;
 
     /// The package's own metric files: in TeX Gyre Pagella a digit is 500 wide, `a` 500, `m` 883 of 1000.
     #[test]
     fn advances_are_those_of_the_face() {
-        let fonts = Fonts::built_in();
+        let fonts = fixture::fonts();
         let regular = fonts.face(FaceName::Regular);
         assert_eq!(regular.advance(regular.glyph('7')), 500);
         assert_eq!(regular.advance(regular.glyph('a')), 500);
@@ -174,7 +175,7 @@ mod tests {
     /// Italic letters of formulas are read back as plain letters, so that a search for `L` finds them.
     #[test]
     fn formula_letters_read_back_plainly() {
-        let fonts = Fonts::built_in();
+        let fonts = fixture::fonts();
         let maths = fonts.face(FaceName::Math);
         for (set, read) in [('𝐿', 'L'), ('𝜅', 'κ'), ('𝜎', 'σ'), ('ℎ', 'h'), ('−', '−'), ('√', '√')]
         {
@@ -185,7 +186,7 @@ mod tests {
 
     #[test]
     fn every_face_has_the_letters_and_a_space() {
-        let fonts = Fonts::built_in();
+        let fonts = fixture::fonts();
         for name in FaceName::ALL {
             let face = fonts.face(name);
             for character in ('0'..='9').chain('A'..='Z').chain('a'..='z').chain([' ', '.', ',', '(', ')']) {
@@ -196,7 +197,7 @@ mod tests {
 
     #[test]
     fn capitals_are_kerned() {
-        let fonts = Fonts::built_in();
+        let fonts = fixture::fonts();
         let face = fonts.face(FaceName::Regular);
         assert!(face.kern(face.glyph('A'), face.glyph('V')) < -50);
         assert_eq!(face.kern(face.glyph('n'), face.glyph('n')), 0);

@@ -5,6 +5,8 @@ use crate::formula::Tree;
 /// How far the rule reaches past the wider part, and the space outside it, ems.
 const OVERHANG: f32 = 0.08;
 const OUTSIDE: f32 = 0.1;
+/// Least air above and below the rule, ems; the face's own least is for fractions within running text.
+const AIR: f32 = 0.11;
 
 impl Maths<'_, '_> {
     pub(super) fn fraction(&mut self, above: &Tree, below: &Tree, filling: Filling<'_>, size: f32, depth: u8) -> Box2 {
@@ -15,8 +17,9 @@ impl Maths<'_, '_> {
         let c = self.setter.fonts.maths.constants;
         let axis = c.axis_height * size;
         let rule = c.fraction_rule * size * 0.75;
-        let up = (c.numerator_shift_up * size).max(axis + rule / 2.0 + c.numerator_gap * size + upper.depth);
-        let down = (c.denominator_shift_down * size).max(lower.height + c.denominator_gap * size + rule / 2.0 - axis);
+        let gap = |least: f32| rule / 2.0 + least.max(AIR) * size;
+        let up = (c.numerator_shift_up * size).max(axis + gap(c.numerator_gap) + upper.depth);
+        let down = (c.denominator_shift_down * size).max(lower.height + gap(c.denominator_gap) - axis);
         let length = upper.width.max(lower.width) + 2.0 * OVERHANG * size;
         let left = OUTSIDE * size;
         let middle = |part: Box2| left + (length - part.width) / 2.0;

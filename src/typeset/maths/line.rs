@@ -25,7 +25,7 @@ impl Maths<'_, '_> {
         indent: f32,
     ) -> Vec<Line> {
         let mut pieces = Vec::new();
-        let mut breaker = Breaker { maths: self, filling, size, width, rest: width - indent };
+        let mut breaker = Breaker { maths: self, filling, size, rest: width - indent };
         breaker.split(tree, Place::Alone, width, &mut pieces);
         self.fill(&pieces, width, indent)
     }
@@ -36,6 +36,14 @@ impl Maths<'_, '_> {
         for (at, piece) in pieces.iter().enumerate() {
             let to = pieces.get(at + 1).map_or(self.frame.items.len(), |next| next.from);
             let left = if lines.len() < 2 { 0.0 } else { indent };
+            let mut piece = *piece;
+            let room = width - indent;
+            if piece.width > room && (at > 0 || piece.width > width) {
+                // The last resort for what no operator parts.
+                let factor = room / piece.width;
+                self.frame.scale(piece.from..to, 0.0, factor);
+                piece.width *= factor;
+            }
             let after = match lines.last_mut() {
                 Some(line) if left + line.width + piece.width <= width + 0.01 => {
                     let x = line.width;
@@ -46,7 +54,7 @@ impl Maths<'_, '_> {
                     x
                 }
                 _ => {
-                    let Box2 { from, width, height, depth, .. } = *piece;
+                    let Box2 { from, width, height, depth, .. } = piece;
                     lines.push(Line { from, to, width, height, depth });
                     0.0
                 }
@@ -64,7 +72,6 @@ struct Breaker<'b, 'm, 'f, 'a> {
     maths: &'b mut Maths<'m, 'f>,
     filling: Filling<'a>,
     size: f32,
-    width: f32,
     rest: f32,
 }
 
@@ -143,7 +150,11 @@ impl Breaker<'_, '_, '_, '_> {
             Tree::Cosine(part) => self.listed("cos(", std::slice::from_ref(&**part), ")", out),
             Tree::Tangent(part) => self.listed("tan(", std::slice::from_ref(&**part), ")", out),
             Tree::ArcTangent(part) => self.listed("atan(", std::slice::from_ref(&**part), ")", out),
-            Tree::Number(_) | Tree::Pi | Tree::Symbol(_) => self.shrunk(tree, out),
+            // What is left cannot be parted; it is made smaller where the lines are filled.
+            Tree::Number(_) | Tree::Pi | Tree::Symbol(_) => {
+                let set = self.maths.build(tree, self.filling, Place::Alone, self.size, 0);
+                out.push(set);
+            }
         }
     }
 
@@ -169,18 +180,6 @@ impl Breaker<'_, '_, '_, '_> {
         }
         self.before(opening, first, out);
         self.after(closing, 0.0, out);
-    }
-
-    /// A single number or symbol wider than the measure: set smaller, the last resort.
-    fn shrunk(&mut self, tree: &Tree, out: &mut Vec<Box2>) {
-        let (items, glyphs) = (self.maths.frame.items.len(), self.maths.frame.glyphs.len());
-        let trial = self.maths.build(tree, self.filling, Place::Alone, self.size, 0);
-        self.maths.frame.items.truncate(items);
-        self.maths.frame.glyphs.truncate(glyphs);
-        let room = self.rest.min(self.width) - self.size * 3.0;
-        let size = if trial.width > room { self.size * room / trial.width } else { self.size };
-        let set = self.maths.build(tree, self.filling, Place::Alone, size, 0);
-        out.push(set);
     }
 
     /// Joins something set just before the piece at `first` to it.

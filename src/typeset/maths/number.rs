@@ -1,6 +1,6 @@
 //! Numbers with powers of ten and units: real superscripts, thin spaces, upright letters.
 use super::{Box2, Maths, Place};
-use crate::typeset::frame::Glyph;
+use crate::typeset::frame::Item;
 use crate::units::Printed;
 
 /// Space between a number and its unit, ems.
@@ -36,8 +36,9 @@ impl Maths<'_, '_> {
         // A real space is set, so that the words stay apart when they are copied.
         let space = self.text(" ", size);
         let width = BEFORE_UNIT * size;
-        if let Some(Glyph { after, .. }) = self.frame.glyphs.last_mut() {
-            *after = ((width - space.width) * 1000.0 / size) as i16;
+        if let (Some(glyph), Some(Item::Run(run))) = (self.frame.glyphs.last_mut(), self.frame.items.last_mut()) {
+            glyph.after = ((width - space.width) * 1000.0 / size) as i16;
+            run.width = width;
         }
         set = self.join(set, 0.0, Box2 { width, ..space });
         let unit = self.unit(unit, size);

@@ -1,9 +1,11 @@
+//! Formulas of every shape: within their boxes, about the axis, broken after operators.
+#![allow(clippy::unwrap_used, reason = "a test may fail loudly")]
 use super::*;
-use crate::typeset::Fonts;
+use crate::typeset::fixture;
 
 fn build(tree: &Tree, filling: Filling<'_>) -> (Frame, Box2) {
-    let fonts = Fonts::built_in();
-    let mut setter = Setter::new(&fonts);
+    let fonts = fixture::fonts();
+    let mut setter = Setter::new(fonts);
     let mut frame = Frame::default();
     let set = Maths { setter: &mut setter, frame: &mut frame }.build(tree, filling, Place::Alone, 10.0, 0);
     (frame, set)
@@ -84,9 +86,9 @@ fn brackets_grow_about_what_they_hold() {
 fn a_long_formula_is_broken_after_operators_within_the_measure() {
     let terms: Vec<Tree> = (1..30).map(|at| Symbol::indexed("F", at) * Symbol::indexed("x", at)).collect();
     let tree = Tree::sum(terms) * Symbol::new("L") / Symbol::new("E");
-    let fonts = Fonts::built_in();
+    let fonts = fixture::fonts();
     for room in [120.0, 250.0, 340.0] {
-        let mut setter = Setter::new(&fonts);
+        let mut setter = Setter::new(fonts);
         let mut frame = Frame::default();
         let lines = Maths { setter: &mut setter, frame: &mut frame }.lines(&tree, Filling::Symbols, 10.0, room, 16.0);
         assert!(lines.len() > 2);

@@ -88,8 +88,9 @@ impl Head {
         setter: &mut Setter<'_>,
         frame: &mut Frame,
     ) -> f32 {
-        let mut maths = Maths { setter, frame };
-        let width = maths.symbol(symbol, None, SMALL * scale * 1.04).width;
+        frame.speak(symbol.as_str());
+        let width = Maths { setter, frame }.symbol(symbol, None, SMALL * scale * 1.04).width;
+        frame.end_speech();
         if unit.is_empty() {
             return width;
         }

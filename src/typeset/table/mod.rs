@@ -12,7 +12,7 @@ use super::flow::Slab;
 use super::frame::{Anchor, Frame};
 use super::geometry::{BASELINE, FINE, LEADING, SMALL};
 use super::paragraph::Paragraph;
-use super::step::tick;
+use super::step::{labelled, tick};
 use super::text::{Setter, Type};
 use crate::document::Inline;
 use crate::sheet::Table;
@@ -21,6 +21,8 @@ const APART: f32 = 11.0;
 
 /// A table ready to be laid out: everything measured at [`SMALL`].
 struct Content2D {
+    /// Id, printed where the table goes on.
+    id: Option<String>,
     heads: Vec<Head>,
     rows: Vec<Vec<Content>>,
     /// Where each row's cells are addressed, if they are.
@@ -33,6 +35,7 @@ struct Content2D {
 pub(super) fn of_sheet(table: &Table, column: Column<'_>, setter: &mut Setter<'_>) -> Vec<Slab> {
     let g = column.geometry;
     let content = Content2D {
+        id: Some(table.id.clone()),
         heads: std::iter::once(Head::words(&table.head)).chain(table.columns.iter().map(Head::of)).collect(),
         rows: table
             .rows
@@ -86,6 +89,7 @@ pub(super) fn of_words(
     }
     let cell = |row: &[Vec<Inline>], at: usize| row.get(at).map_or(Content::Empty, |words| Content::inline(words));
     let content = Content2D {
+        id: None,
         heads: (0..width).map(|at| Head::inline(head.get(at).map_or(&[], Vec::as_slice))).collect(),
         rows: rows.iter().map(|row| (0..width).map(|at| cell(row, at)).collect()).collect(),
         anchors: vec![None; rows.len()],
@@ -113,18 +117,8 @@ fn laid_out(content: &Content2D, widest_left: f32, column: Column<'_>, setter: &
 }
 
 fn remark(note: &str, column: Column<'_>, setter: &mut Setter<'_>) -> Vec<Slab> {
-    let mut paragraph = Paragraph::default();
-    paragraph.add("note ", Type::new(FaceName::Italic, FINE), None);
-    paragraph.add(" ", Type::new(FaceName::Regular, FINE), None);
-    paragraph.add(note, Type::new(FaceName::Regular, FINE), None);
-    let leading = FINE * 1.42;
-    let lines = paragraph.lines(setter, column.geometry.right - column.geometry.text);
-    let mut slabs: Vec<Slab> = Vec::new();
-    for line in lines {
-        let mut frame = Frame::default();
-        paragraph.set(setter, &mut frame, line, column.geometry.text, leading - 0.25 * FINE);
-        slabs.push(Slab { frame, height: leading, ..Slab::default() });
-    }
+    let words = Paragraph::plain(note, Type::new(FaceName::Regular, FINE));
+    let mut slabs = labelled("note", &words, setter, column.geometry);
     space(&mut slabs, 4.0, 0.0);
     slabs
 }

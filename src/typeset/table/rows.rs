@@ -2,6 +2,7 @@
 use super::Content2D;
 use super::cell::{CELL, Content, Head};
 use super::columns::{GAP, Layout, Placed};
+use crate::typeset::FaceName;
 use crate::typeset::flow::Slab;
 use crate::typeset::frame::{Anchor, Frame, Item, Rule};
 use crate::typeset::geometry::{Geometry, SMALL};
@@ -20,8 +21,12 @@ pub(super) fn set(content: &Content2D, layout: &Layout, left: f32, setter: &mut 
     // Rules may not reach past the text even where a column was rounded up.
     let width = width.min(g.right - left);
     let count = content.rows.len();
-    let head = Rc::new(head(content, layout, left, width, setter));
+    let mut head = head(content, layout, left, width, setter);
     let mut slabs = vec![Slab { frame: head.frame.clone(), height: head.height, keep: count > 0, ..Slab::default() }];
+    if let Some(id) = &content.id {
+        head = continued(id, head, setter, g);
+    }
+    let head = Rc::new(head);
     for at in 0..count {
         let mut slab = row(content, at, layout, left, setter);
         slab.head = Some(Rc::clone(&head));
@@ -40,6 +45,18 @@ pub(super) fn set(content: &Content2D, layout: &Layout, left: f32, setter: &mut 
         slabs.push(slab);
     }
     slabs
+}
+
+/// The head as it is repeated on the next sheet, with the table's id where the eye starts.
+fn continued(id: &str, head: Slab, setter: &mut Setter<'_>, g: &Geometry) -> Slab {
+    let mut frame = Frame::default();
+    let size = SMALL;
+    let width = setter.set(&mut frame, id, Type::new(FaceName::Bold, size), g.left, size);
+    let words = Type::new(FaceName::Italic, size);
+    setter.set(&mut frame, "continued", words, g.text.max(g.left + width + 8.0), size);
+    let above = size * 1.6;
+    frame.append(head.frame, 0.0, above);
+    Slab { frame, height: head.height + above, ..Slab::default() }
 }
 
 fn thin(frame: &mut Frame, x: f32, y: f32, width: f32, height: f32) {
@@ -115,9 +132,15 @@ fn row(content: &Content2D, at: usize, layout: &Layout, left: f32, setter: &mut 
         }
         x += column.width + GAP * layout.scale;
     }
-    let open = content.open && content.rows[at].iter().any(|cell| matches!(cell, Content::Empty));
-    let least = if open { size * OPEN } else { leading };
-    Slab { frame, height: (leading + size * 1.25 * (lines - 1) as f32).max(least), ..Slab::default() }
+    let height = leading + size * 1.25 * (lines - 1) as f32;
+    if content.open {
+        // Words stand low, on the line that is left to write on.
+        let spare = (size * OPEN - height).max(0.0);
+        frame.shift(0, 0.0, spare);
+        frame.links.iter_mut().for_each(|link| link.y += spare);
+        return Slab { frame, height: height + spare, ..Slab::default() };
+    }
+    Slab { frame, height, ..Slab::default() }
 }
 
 fn number(text: &str, split: usize, column: Placed, scale: f32, x: f32, setter: &mut Setter<'_>, frame: &mut Frame) {

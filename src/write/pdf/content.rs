@@ -148,7 +148,7 @@ impl Stream {
         if rest != 0 {
             self.bytes.push(b'.');
             self.bytes.push(b'0' + rest / 10);
-            if rest % 10 != 0 {
+            if !rest.is_multiple_of(10) {
                 self.bytes.push(b'0' + rest % 10);
             }
         } else if size == 0 {
