@@ -1,7 +1,16 @@
 //! Drawings made from the solved data: scenes of lines, fills and text in millimetres on paper.
+mod canvas;
+mod member;
+mod number;
+mod place;
 mod scene;
+mod structure;
+mod support;
+mod text;
+mod view;
 
 pub use scene::{Anchor, Dash, Item, Scene, Stroke, Style, TextItem};
+pub use structure::structure;
 
 /// A drawing with its caption.
 #[derive(Debug, Clone, PartialEq)]

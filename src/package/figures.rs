@@ -1,10 +1,10 @@
 //! Drawings of a package.
 use crate::analysis::Solution;
-use crate::figure::Figure;
+use crate::figure::{self, Figure};
 use crate::model::Model;
 use crate::sheet::Results;
 
 /// Every drawing.
-pub(super) fn draw(_model: &Model, _solution: &Solution, _results: &Results) -> Vec<Figure> {
-    Vec::new()
+pub(super) fn draw(model: &Model, _solution: &Solution, _results: &Results) -> Vec<Figure> {
+    vec![figure::structure(model)]
 }
