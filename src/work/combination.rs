@@ -274,7 +274,12 @@ impl Chain<'_> {
             let [x1, y1, x2, y2]: [&Known; 4] = if self.out.fixed[0].is_some() && self.out.fixed[1].is_some() {
                 [&joint::SLACK_START_X, &joint::SLACK_START_Y, &joint::SLACK_END_X, &joint::SLACK_END_Y]
             } else {
-                [&joint::SLACK_EVEN_START_X, &joint::SLACK_EVEN_START_Y, &joint::SLACK_EVEN_END_X, &joint::SLACK_EVEN_END_Y]
+                [
+                    &joint::SLACK_EVEN_START_X,
+                    &joint::SLACK_EVEN_START_Y,
+                    &joint::SLACK_EVEN_END_X,
+                    &joint::SLACK_EVEN_END_Y,
+                ]
             };
             self.out.on_joint = [[part(c, 11, x1), part(s, 12, y1)], [part(c, 13, x2), part(s, 14, y2)]];
         }
