@@ -29,8 +29,6 @@ pub(super) enum Clear {
     Hard,
     /// Cross it unwillingly.
     Soft,
-    /// May cross it.
-    Free,
 }
 
 struct Waiting {
@@ -64,11 +62,6 @@ impl Canvas {
     pub(super) fn shape(&mut self, points: Vec<[f64; 2]>, stroke: Option<Stroke>, fill: f64) {
         self.keep_clear(&points, true, Clear::Hard);
         self.items.push(Item::Path { points, closed: true, stroke, fill: Some(fill) });
-    }
-
-    /// A filled shape that labels may lie on.
-    pub(super) fn tint(&mut self, points: Vec<[f64; 2]>, fill: f64) {
-        self.items.push(Item::Path { points, closed: true, stroke: None, fill: Some(fill) });
     }
 
     /// A circle.
@@ -127,9 +120,9 @@ impl Canvas {
 
     /// Whether a label of that text already waits near a point.
     pub(super) fn said_near(&self, text: &str, at: [f64; 2], within: f64) -> bool {
-        self.waiting.iter().any(|w| {
-            w.text == text && w.wish.anchors.iter().any(|a| (a[0] - at[0]).hypot(a[1] - at[1]) < within)
-        })
+        self.waiting
+            .iter()
+            .any(|w| w.text == text && w.wish.anchors.iter().any(|a| (a[0] - at[0]).hypot(a[1] - at[1]) < within))
     }
 
     /// A line of text below the drawing.
@@ -137,16 +130,10 @@ impl Canvas {
         self.notes.push(text.into());
     }
 
-    /// Labels keep off a rectangle.
-    pub(super) fn block(&mut self, area: Area) {
-        self.taken.areas.push(area);
-    }
-
     fn keep_clear(&mut self, points: &[[f64; 2]], closed: bool, clear: Clear) {
         let list = match clear {
             Clear::Hard => &mut self.taken.hard,
             Clear::Soft => &mut self.taken.soft,
-            Clear::Free => return,
         };
         list.extend(points.windows(2).map(|w| [w[0], w[1]]));
         if let (true, Some(first), Some(last)) = (closed, points.first(), points.last()) {

@@ -107,7 +107,7 @@ pub(super) fn name(canvas: &mut Canvas, view: &View<'_>, member: &Member, style:
     // Above what lies flat, to the left of what stands.
     let up = if normal[1] > 0.3 || normal[1].abs() <= 0.3 && normal[0] > 0.0 { normal.map(|v| -v) } else { normal };
     let anchors = PLACES.iter().map(|t| view.on(member, t * length, 0.0)).collect();
-    canvas.label(Wish { anchors, toward: Some(up), gap: 0.9 }, style, text);
+    canvas.label(Wish { anchors, toward: Some(up), gap: 1.3 }, style, text);
 }
 
 /// Arrow along the axis from start to end with a tick toward local y, clear of other members.

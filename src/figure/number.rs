@@ -31,6 +31,7 @@ pub(super) fn bare(display: &Display, measure: Measure, value: f64, digits: i32)
 #[must_use]
 pub(super) fn quantity(display: &Display, measure: Measure, value: f64, digits: i32) -> String {
     let unit = display.unit(measure);
-    let gap = if unit.text.is_empty() || unit.text.starts_with('°') && unit.text.chars().count() == 1 { "" } else { " " };
+    let gap =
+        if unit.text.is_empty() || unit.text.starts_with('°') && unit.text.chars().count() == 1 { "" } else { " " };
     format!("{}{gap}{}", number(value / unit.scale, digits), unit.text)
 }

@@ -74,7 +74,12 @@ fn triangle(canvas: &mut Canvas, at: [f64; 2], out: [f64; 2], stroke: Stroke) {
 /// A line with the ground hatched beyond it.
 fn ground(canvas: &mut Canvas, at: [f64; 2], out: [f64; 2], half: f64, stroke: Stroke) {
     let side = [-out[1], out[0]];
-    canvas.line(along(at, side, -half), along(at, side, half), Stroke { width: 1.6 * stroke.width, ..stroke }, Clear::Hard);
+    canvas.line(
+        along(at, side, -half),
+        along(at, side, half),
+        Stroke { width: 1.6 * stroke.width, ..stroke },
+        Clear::Hard,
+    );
     let thin = Stroke { width: 0.6 * stroke.width, ..stroke };
     let count = (half / 0.6).round() as i32;
     for k in 0..count {

@@ -52,10 +52,7 @@ impl<'a> View<'a> {
 
     /// A point on the sheet.
     pub(super) fn point(&self, at: [f64; 2]) -> [f64; 2] {
-        [
-            self.corner[0] + self.scale * (at[0] - self.low[0]),
-            self.corner[1] - self.scale * (at[1] - self.low[1]),
-        ]
+        [self.corner[0] + self.scale * (at[0] - self.low[0]), self.corner[1] - self.scale * (at[1] - self.low[1])]
     }
 
     /// A node on the sheet.

@@ -68,7 +68,8 @@ fn text(out: &mut String, item: &TextItem) {
         number(item.at[0]),
         number(item.at[1])
     );
-    let halo = if item.halo { " stroke=\"#fff\" stroke-width=\"0.6\" paint-order=\"stroke\" fill=\"#000\"" } else { "" };
+    let halo =
+        if item.halo { " stroke=\"#fff\" stroke-width=\"0.6\" paint-order=\"stroke\" fill=\"#000\"" } else { "" };
     let _ = writeln!(out, "<text {place}{halo}>{}</text>", escape(&item.text));
 }
 
