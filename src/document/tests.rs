@@ -95,6 +95,8 @@ fn full(said: &str) -> Facts {
                 figures: vec![text("A5")],
                 steps: vec![text("A5.P01")],
             }],
+            combination_tables: Vec::new(),
+            limit_tables: Vec::new(),
             materials: vec![text("S275")],
             figures: vec![text("structure")],
             node_tables: vec![text("INPUT.nodes")],

@@ -206,7 +206,7 @@ pub(super) fn sample(results: &Results, sheet: &Sheet, sha256: &str) -> Vec<Samp
         for byte in sha256.bytes().chain(step.number.bytes()) {
             hash = (hash ^ u64::from(byte)).wrapping_mul(0x0100_0000_01b3);
         }
-        if (hash ^ (hash >> 32)) % 10 == 0 {
+        if (hash ^ (hash >> 32)).is_multiple_of(10) {
             add(&step.number, "drawn by the fingerprint");
         }
     }

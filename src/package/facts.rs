@@ -93,7 +93,7 @@ pub fn facts(
 
 /// What the brief without results may speak of: everything of the input, nothing of the solution.
 #[must_use]
-pub fn brief(model: &Model, sheet: &Sheet, origin: Origin<'_>) -> Facts {
+pub(super) fn brief(model: &Model, sheet: &Sheet, origin: Origin<'_>) -> Facts {
     let steps = Index::new(sheet);
     let nothing = Solution {
         combinations: vec![crate::analysis::CombinationSolution::default(); model.combinations.len()],

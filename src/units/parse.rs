@@ -172,6 +172,9 @@ fn unit_length(text: &str) -> usize {
     text.trim_end().len()
 }
 
+/// Most names in one unit; what is longer is no unit of engineering, and its powers could not be counted.
+const MOST_FACTORS: usize = 5;
+
 /// Reads a unit: `kN·m`, `N/mm2`, `1/m`, `/K`, `kNm`. Empty text is a plain number.
 ///
 /// # Errors
@@ -184,6 +187,7 @@ fn parse_unit_at(text: &str, offset: usize) -> Result<Unit, UnitFault> {
     let mut dimension = Dimension::NONE;
     let mut scale = 1.0;
     let mut printed = String::new();
+    let mut factors_read = 0;
     let mut divide = false;
     let mut at = 0;
     let mut expects_factor = false;
@@ -213,6 +217,14 @@ fn parse_unit_at(text: &str, offset: usize) -> Result<Unit, UnitFault> {
         if token != "1" {
             for (unit, power) in factors(token, &span)? {
                 let power = if divide { -power } else { power };
+                factors_read += 1;
+                if factors_read > MOST_FACTORS {
+                    return fault(
+                        span,
+                        "the unit has too many factors",
+                        "a unit is a product of a few names, such as `kN·m/rad`",
+                    );
+                }
                 dimension = dimension * unit.dimension.power(power);
                 scale *= unit.scale.powi(i32::from(power));
                 print_factor(&mut printed, unit.symbol, power);
@@ -291,7 +303,7 @@ fn read_power(text: &str, span: &Range<usize>) -> Result<i8, UnitFault> {
         })
         .collect();
     match plain.parse::<i8>() {
-        Ok(power) if power != 0 && power.abs() <= 9 => Ok(power),
+        Ok(power) if power != 0 && (-9..=9).contains(&power) => Ok(power),
         _ => fault(
             span.clone(),
             format!("`{text}` is not a power"),
@@ -330,9 +342,16 @@ mod tests {
 
     #[test]
     fn faults_say_where() {
-        for (text, span) in
-            [("12 kM", 3..5), ("abc", 0..3), ("5 kN 3 m", 5..8), ("1e999 kN", 0..5), ("nan", 0..3), ("3 kN/", 2..5)]
-        {
+        for (text, span) in [
+            ("12 kM", 3..5),
+            ("abc", 0..3),
+            ("5 kN 3 m", 5..8),
+            ("1e999 kN", 0..5),
+            ("nan", 0..3),
+            ("3 kN/", 2..5),
+            ("3 m-128", 2..8),
+            ("3 m·m·m·m·m·m", 17..18),
+        ] {
             let fault = parse_quantity(text).expect_err(text);
             assert_eq!(fault.span, span, "{text}: {fault:?}");
             assert!(!fault.help.is_empty());

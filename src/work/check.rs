@@ -92,6 +92,7 @@ impl Bench<'_, '_> {
 }
 
 /// Works every check of a member under a combination.
+#[allow(clippy::too_many_arguments, reason = "a check draws on everything worked of its member")]
 pub fn work_member_checks(
     sheet: &mut dyn Worksheet,
     model: &Model,

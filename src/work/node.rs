@@ -20,6 +20,9 @@ pub struct NodeBalance {
 
 const WORDS: [&str; 3] = ["global X", "global Y", "moments"];
 
+/// One term of a balance: its factor, its value, and whether it is taken off.
+type Part = (Option<Value>, Value, bool);
+
 struct Parts {
     terms: Vec<Tree>,
     count: usize,
@@ -62,7 +65,7 @@ pub fn work_node(
         .iter()
         .map(|(case, size)| (*case, *size, factor(sheet, model, combination, *case, *size)))
         .collect();
-    let mut sums: [Option<(Vec<(Option<Value>, Value, bool)>, usize)>; 3] = [None, None, None];
+    let mut sums: [Option<(Vec<Part>, usize)>; 3] = [None, None, None];
     for (direction, sum) in sums.iter_mut().enumerate() {
         let parts = collect(sheet, model, node, direction, forces, loads, &factors);
         if !parts.is_empty() {
@@ -118,7 +121,7 @@ fn collect(
     forces: &[MemberForces],
     loads: &AllLoads,
     factors: &[(usize, f64, Option<Value>)],
-) -> Vec<(Option<Value>, Value, bool)> {
+) -> Vec<Part> {
     let mut parts = Vec::new();
     for (at, member) in model.members.iter().enumerate() {
         for (end, end_node) in [member.from, member.to].into_iter().enumerate() {

@@ -14,6 +14,9 @@ const fn measure(direction: usize) -> Measure {
     if direction == 2 { Measure::Moment } else { Measure::Force }
 }
 
+/// A term of a sum with the symbols it brings.
+type Term = (Tree, Vec<(Symbol, Value)>);
+
 /// What a load case asks for: its resultant and its moment about the global origin.
 pub fn work_case_total(
     sheet: &mut dyn Worksheet,
@@ -21,7 +24,7 @@ pub fn work_case_total(
     (index, case): (usize, &LoadCase),
     loads: &AllLoads,
 ) -> [Option<Value>; 3] {
-    let mut parts: [Vec<(Tree, Vec<(Symbol, Value)>)>; 3] = Default::default();
+    let mut parts: [Vec<Term>; 3] = Default::default();
     let mut count = 0;
     for of_member in loads {
         for load in &of_member[index] {

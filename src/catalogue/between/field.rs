@@ -198,7 +198,7 @@ impl Field {
     #[must_use]
     pub fn is_steady_axially(&self) -> bool {
         let first = self.stretches.first().map_or(0.0, |s| s.n.0[0]);
-        self.stretches.iter().all(|s| s.n.0[1..].iter().all(|c| *c == 0.0) && s.n.0[0] == first)
+        self.stretches.iter().all(|s| s.n.0[1..].iter().all(|c| *c == 0.0) && (s.n.0[0] - first).abs() == 0.0)
     }
 
     /// Places where the loading or its slope changes, the ends included.

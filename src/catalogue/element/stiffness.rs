@@ -75,8 +75,11 @@ const fn axial_ends(force: f64) -> [f64; 2] {
     [-force, force]
 }
 
+/// Works one definition from the values of its symbols.
+type Evaluate<'a> = dyn Fn(&'static Definition, &[(Symbol, f64)]) -> f64 + 'a;
+
 fn bending_ends(
-    evaluate: &dyn Fn(&'static Definition, &[(Symbol, f64)]) -> f64,
+    evaluate: &Evaluate<'_>,
     length: f64,
     rigidity: f64,
     shear: f64,

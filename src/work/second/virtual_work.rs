@@ -26,8 +26,8 @@ pub fn support_share(
         for (member, forces) in model.members.iter().zip(unit) {
             for (end, at) in [member.from, member.to].into_iter().enumerate() {
                 if at == support.node {
-                    for axis in 0..2 {
-                        reaction[axis] -= forces.on_joint[end][axis].map_or(0.0, |f| f.si);
+                    for (sum, force) in reaction.iter_mut().zip(forces.on_joint[end]) {
+                        *sum -= force.map_or(0.0, |f| f.si);
                     }
                     if !member.hinge[end] {
                         reaction[2] -= forces.m[end].map_or(0.0, |m| if end == 0 { m.si } else { -m.si });
