@@ -440,7 +440,7 @@ mod tests {
 
     #[test]
     fn no_block_lists_a_key_twice() {
-        let shapes = shape_keys().into_iter().map(|(name, keys)| (name, keys));
+        let shapes = shape_keys().into_iter();
         for (name, keys) in blocks().into_iter().map(|b| (b.address, b.keys.into_owned())).chain(shapes) {
             for (at, key) in keys.iter().enumerate() {
                 assert!(keys[..at].iter().all(|other| other.name != key.name), "{name}: {}", key.name);

@@ -54,8 +54,9 @@ fn main() {
                 .status();
             assert!(status.is_ok_and(|s| matches!(s.code(), Some(0 | 3))));
         });
-        let sheets =
-            calcsheaf::typeset::typeset(&package.document, &package.sheet, solved.model.display.paper, &fonts).sheets();
+        let sheets = calcsheaf::typeset::typeset(&package.document, &package.sheet, solved.model.display.paper, &fonts)
+            .sheets
+            .len();
         println!(
             "{:<22} {sheets:>8} {solve:>9.1} {write:>9.1} {pdf:>9.1} {process:>9.1}",
             name.trim_end_matches(".yaml")

@@ -37,7 +37,7 @@ fn look_up(results: &serde_json::Value, path: &str) -> Option<f64> {
         })?;
         return row[key].as_f64();
     }
-    path.split('.').fold(Some(results), |at, key| at.and_then(|at| at.get(key)))?.as_f64()
+    path.split('.').try_fold(results, |at, key| at.get(key))?.as_f64()
 }
 
 fn number(entry: &Value, key: &str) -> Option<f64> {
