@@ -48,11 +48,11 @@ pub(super) struct Placed {
 }
 
 /// Widths of a column at full size.
-#[derive(Debug, Clone, Copy, Default)]
+#[derive(Debug, Clone, Default)]
 struct Natural {
-    /// Heading and cells on one line each, and the cells alone.
+    /// Heading and cells on one line each, and each cell.
     whole: f32,
-    cells: f32,
+    cells: Vec<f32>,
     /// What cannot be turned over: the longest word, the numbers.
     least: f32,
     before_point: f32,
@@ -77,13 +77,16 @@ impl Natural {
 /// Columns that fit into `measure`, or else into the `whole` width.
 pub(super) fn fit(content: &Content2D, measure: f32, whole: f32, setter: &mut Setter<'_>) -> Vec<Layout> {
     let natural: Vec<Natural> = (0..content.heads.len()).map(|at| measured(content, at, setter)).collect();
+    if let Some(layout) = turned(&natural, 1.0, GAP, measure, false).filter(|layout| is_whole(&natural, layout)) {
+        return vec![layout];
+    }
     let mut best: Option<(f32, Layout)> = None;
     for wide in [false, true] {
         let room = if wide { whole } else { measure };
         for scale in SCALES {
             for gap in [GAP * scale, TIGHT * scale] {
                 let Some(layout) = turned(&natural, scale, gap, room, wide) else { continue };
-                let cost = cost(&natural, &layout);
+                let cost = cost(&natural, &layout, content);
                 if best.as_ref().is_none_or(|(least, _)| cost < least - 1e-3) {
                     best = Some((cost, layout));
                 }
@@ -93,16 +96,29 @@ pub(super) fn fit(content: &Content2D, measure: f32, whole: f32, setter: &mut Se
     best.map_or_else(|| parted(&natural, whole), |(_, layout)| vec![layout])
 }
 
-/// Lines to a row, with what small type, narrow gaps and a reach beyond the measure are worth.
-fn cost(natural: &[Natural], layout: &Layout) -> f32 {
-    let lines = layout.columns.iter().map(|column| {
-        let cells = natural[column.index].cells * layout.scale;
-        (cells / column.width.max(1.0) * 1.08 - 0.1).ceil().max(1.0)
-    });
-    let lines = lines.fold(1.0, f32::max);
-    let small = (1.0 - layout.scale) * 3.0;
-    let narrow = if layout.gap < GAP * layout.scale { 0.1 } else { 0.0 };
-    lines * layout.scale * layout.scale + small + narrow + if layout.wide { 0.2 } else { 0.0 }
+/// Whether no column is narrower than its texts on one line.
+fn is_whole(natural: &[Natural], layout: &Layout) -> bool {
+    layout.columns.iter().all(|column| column.width >= natural[column.index].whole - 0.01)
+}
+
+/// Mean height of a row, with what small type, narrow gaps and a reach beyond the measure are worth.
+fn cost(natural: &[Natural], layout: &Layout, content: &Content2D) -> f32 {
+    let rows = content.rows.len().max(1);
+    // Rows to be written in are high enough for two lines in any case.
+    let least = if content.open { 2.0 } else { 1.0 };
+    let lines: f32 = (0..rows)
+        .map(|row| {
+            let of = |column: &Placed| {
+                let cell = natural[column.index].cells.get(row).copied().unwrap_or(0.0) * layout.scale;
+                // Words do not fill their lines.
+                let loose = if cell > column.width + 0.01 { 1.12 } else { 1.0 };
+                (cell * loose / column.width.max(1.0) - 0.01).ceil()
+            };
+            layout.columns.iter().map(of).fold(least, f32::max)
+        })
+        .sum();
+    let narrow = if layout.gap < GAP * layout.scale { 0.08 } else { 0.0 };
+    lines / rows as f32 * layout.scale + 5.0 * (1.0 - layout.scale) + narrow + if layout.wide { 0.25 } else { 0.0 }
 }
 
 /// Columns made narrower until they fit, all texts turning over about equally often; none where words forbid it.
@@ -159,24 +175,30 @@ fn parted(natural: &[Natural], room: f32) -> Vec<Layout> {
 }
 
 fn measured(content: &Content2D, at: usize, setter: &mut Setter<'_>) -> Natural {
-    let mut natural = Natural::default();
+    let mut natural = Natural { cells: Vec::with_capacity(content.rows.len()), ..Natural::default() };
+    let mut empty = false;
     for row in &content.rows {
-        match row.get(at) {
+        let cell = match row.get(at) {
             Some(Content::Words(words)) => {
                 let (whole, longest) = words.widths(setter);
-                natural.cells = natural.cells.max(whole);
                 natural.least = natural.least.max(longest);
+                whole
             }
             Some(Content::Number(text, split)) => {
-                natural.before_point = natural.before_point.max(setter.width(&text[..*split], CELL));
-                natural.after_point = natural.after_point.max(setter.width(&text[*split..], CELL));
+                let [before, after] = [&text[..*split], &text[*split..]].map(|part| setter.width(part, CELL));
+                natural.before_point = natural.before_point.max(before);
+                natural.after_point = natural.after_point.max(after);
+                before + after
             }
-            _ => {}
-        }
+            _ => {
+                empty = true;
+                0.0
+            }
+        };
+        natural.cells.push(cell);
     }
     let numbers = natural.before_point + natural.after_point;
-    natural.cells = natural.cells.max(numbers);
-    natural.open = content.open && natural.cells <= 0.0;
+    natural.open = content.open && empty;
     let (whole, longest) = match &content.heads[at] {
         Head::Words(words) => words.widths(setter),
         Head::Symbol(symbol, unit) => {
@@ -185,6 +207,7 @@ fn measured(content: &Content2D, at: usize, setter: &mut Setter<'_>) -> Natural 
         }
     };
     natural.least = natural.least.max(numbers).max(longest);
-    natural.whole = natural.cells.max(whole).max(if natural.open { OPEN } else { 0.0 });
+    let open = if natural.open { OPEN } else { 0.0 };
+    natural.whole = natural.cells.iter().copied().fold(numbers.max(whole).max(open), f32::max);
     natural
 }
