@@ -19,6 +19,9 @@ pub(super) struct Pack {
     /// Folder for the package; beside the input where left out.
     #[arg(long, value_name = "DIR")]
     out: Option<PathBuf>,
+    /// Write the brief without results instead, for a checker who works independently first.
+    #[arg(long)]
+    blind: bool,
 }
 
 impl Pack {
@@ -67,7 +70,10 @@ impl Pack {
         }
         let name = input.file_name().map_or_else(|| "input.yaml".into(), |name| name.to_string_lossy().into_owned());
         let stem = input.file_stem().map_or_else(|| "input".into(), |stem| stem.to_string_lossy().into_owned());
-        let package = match solved.package(&name, &text, templates) {
+        let stem = if self.blind { format!("{stem}.brief") } else { stem };
+        let made =
+            if self.blind { solved.brief(&name, &text, templates) } else { solved.package(&name, &text, templates) };
+        let package = match made {
             Ok(package) => package,
             Err(fault) => {
                 warn(&format!("error: {fault}"));
@@ -85,8 +91,11 @@ impl Pack {
         let mut outputs = vec![
             Output { path: folder.join(format!("{stem}.md")), bytes: package.markdown.into_bytes() },
             Output { path: folder.join(format!("{stem}.pdf")), bytes: pdf },
-            Output { path: folder.join(format!("{stem}.results.json")), bytes: package.results.into_bytes() },
         ];
+        if !self.blind {
+            let path = folder.join(format!("{stem}.results.json"));
+            outputs.push(Output { path, bytes: package.results.into_bytes() });
+        }
         let drawings = folder.join(format!("{stem}.figures"));
         for (id, svg) in package.figures {
             outputs.push(Output { path: drawings.join(format!("{id}.svg")), bytes: svg.into_bytes() });
@@ -98,6 +107,10 @@ impl Pack {
                 fault.error
             ));
             return Outcome::Failed;
+        }
+        if self.blind {
+            say(&format!("{}: brief without results written", folder.join(&stem).display()));
+            return Outcome::Good;
         }
         report(&folder, &stem, &solved, package.beyond);
         if package.beyond > 0 { Outcome::BeyondLimit } else { Outcome::Good }

@@ -54,7 +54,7 @@ fn environment(templates: &Templates) -> Result<Environment<'static>, TemplateFa
     environment.set_formatter(print);
     environment.add_filter("prose", |text: String| Value::from_safe_string(token::prose(&text)));
     environment.add_filter("link", |to: String| Value::from_safe_string(token::link(&to)));
-    for (name, text) in templates.iter().filter(|(name, _)| *name != ORDER) {
+    for (name, text) in templates.iter().filter(|(name, _)| !name.starts_with(ORDER)) {
         environment
             .add_template_owned(name.to_string(), text.to_string())
             .map_err(|error| TemplateFault::from_engine(&error, name))?;

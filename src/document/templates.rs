@@ -15,8 +15,11 @@ const BUILT_IN: &[(&str, &str)] = built_in![
     "cover" "revisions" "contents" "purpose" "checking" "input" "results" "equilibrium" "members" "comparison"
     "checker" "limits" "file" "program"
     "marks" "caution-licence" "caution-limits" "caution-confirm" "caution-beyond" "caution-not-checked"
-    "caution-change"
+    "caution-change" "brief-cover" "brief-signs" "brief-results"
 ];
+
+/// Name of the order list of a brief without results.
+const ORDER_OF_BRIEF: &str = "order-brief";
 
 /// A set of templates by name.
 #[derive(Debug, Clone, PartialEq, Eq)]
@@ -31,6 +34,7 @@ impl Templates {
         let mut by_name: BTreeMap<String, String> =
             BUILT_IN.iter().map(|(name, text)| ((*name).to_string(), (*text).to_string())).collect();
         by_name.insert(ORDER.to_string(), include_str!("../../templates/order.txt").to_string());
+        by_name.insert(ORDER_OF_BRIEF.to_string(), include_str!("../../templates/order-brief.txt").to_string());
         Self { by_name }
     }
 
@@ -45,6 +49,16 @@ impl Templates {
             let stem = [".md.j2", ".j2", ".md", ".txt"].iter().find_map(|ending| name.strip_suffix(ending));
             let name = stem.unwrap_or(&name).to_string();
             templates.by_name.insert(name, text);
+        }
+        templates
+    }
+
+    /// The same templates with the chapters of another order list.
+    #[must_use]
+    pub fn with_order(&self, list: &str) -> Self {
+        let mut templates = self.clone();
+        if let Some(text) = self.text(list) {
+            templates.by_name.insert(ORDER.to_string(), text.to_string());
         }
         templates
     }

@@ -1,7 +1,24 @@
 //! Drawings made from the solved data: scenes of lines, fills and text in millimetres on paper.
+mod canvas;
+mod curve;
+mod loads;
+mod member;
+mod number;
+mod place;
 mod scene;
+mod section;
+mod signs;
+mod structure;
+mod support;
+mod text;
+mod view;
 
+pub use curve::{Diagram, Shape, Usage, diagram, shape, utilisation};
+pub use loads::load_case;
 pub use scene::{Anchor, Dash, Item, Scene, Stroke, Style, TextItem};
+pub use section::section;
+pub use signs::signs;
+pub use structure::structure;
 
 /// A drawing with its caption.
 #[derive(Debug, Clone, PartialEq)]

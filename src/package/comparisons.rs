@@ -152,11 +152,16 @@ fn groups(model: &Model, sheet: &Sheet) -> Vec<Group> {
     let node_step = |number: &str| number.rsplit('.').next().is_some_and(|last| last.starts_with("C8"));
     let whole_step = |number: &str| number.starts_with("structure.") && number.ends_with(".C51");
     let _ = model;
-    [("Movements of nodes", of(&node_step)), ("Stability of the whole", of(&whole_step))]
+    let overview = sheet.figure("utilisation").map(|figure| Group {
+        title: "Ratios at a glance".into(),
+        figures: vec![figure.id.clone()],
+        ..Group::default()
+    });
+    let of_steps = [("Movements of nodes", of(&node_step)), ("Stability of the whole", of(&whole_step))]
         .into_iter()
         .filter(|(_, steps)| !steps.is_empty())
-        .map(|(title, steps)| Group { title: title.into(), steps, ..Group::default() })
-        .collect()
+        .map(|(title, steps)| Group { title: title.into(), steps, ..Group::default() });
+    overview.into_iter().chain(of_steps).collect()
 }
 
 /// What the checker should confirm at least, chosen by rule and not by the originator.

@@ -91,6 +91,27 @@ pub fn facts(
     }
 }
 
+/// What the brief without results may speak of: everything of the input, nothing of the solution.
+#[must_use]
+pub fn brief(model: &Model, sheet: &Sheet, origin: Origin<'_>) -> Facts {
+    let steps = Index::new(sheet);
+    let nothing = Solution {
+        combinations: vec![crate::analysis::CombinationSolution::default(); model.combinations.len()],
+        ..Solution::default()
+    };
+    Facts {
+        project: project(&model.project),
+        display: DisplayFacts { detail: "summary".into(), digits: model.display.digits.to_string() },
+        sign_figures: figures(sheet, &["signs"]),
+        structure: structure(model, sheet, &steps),
+        cases: model.cases.iter().map(|case| self::case(model, case, sheet, &steps)).collect(),
+        combinations: (0..model.combinations.len()).map(|at| combination(model, &nothing, at, sheet)).collect(),
+        input: InputFacts { name: origin.name.into(), sha256: origin.sha256.into(), text: origin.text.into() },
+        program: ProgramFacts { version: env!("CARGO_PKG_VERSION").into(), ..ProgramFacts::default() },
+        ..Facts::default()
+    }
+}
+
 fn text(of: Option<&String>) -> String {
     of.cloned().unwrap_or_default()
 }
@@ -350,8 +371,7 @@ fn member_sheets(model: &Model, results: &Results, sheet: &Sheet, steps: &Index)
                 ("Shear stress", name, Some(combination), 'S', 10..1000),
                 ("Comparison with limits", name, Some(combination), 'C', 0..80),
             ];
-            let reason =
-                if results.governing[at] == *c && model.combinations.len() > 1 { "governs this member" } else { "" };
+            let reason = reason(model, results, at, *c);
             let mut groups = steps.groups(&wanted);
             // Headings that repeat would make links depend on their order in the document.
             groups.iter_mut().for_each(|group| group.title = format!("{}, {name}, {combination}", group.title));
@@ -363,7 +383,7 @@ fn member_sheets(model: &Model, results: &Results, sheet: &Sheet, steps: &Index)
                     ..Group::default()
                 });
             }
-            CombinationSheet { combination: combination.clone(), reason: reason.into(), groups }
+            CombinationSheet { combination: combination.clone(), reason, groups }
         };
         sheets.push(MemberSheet {
             member: member_fact(model, at),
@@ -373,6 +393,28 @@ fn member_sheets(model: &Model, results: &Results, sheet: &Sheet, steps: &Index)
         });
     }
     sheets
+}
+
+/// Why a member is worked line by line under a combination; completes "this combination …".
+fn reason(model: &Model, results: &Results, member: usize, combination: usize) -> String {
+    let words = match (results.governing[member] == combination, results.deflecting[member] == Some(combination)) {
+        _ if model.display.detail != Detail::Governing => return String::new(),
+        (true, true) => "governs this member and its deflection",
+        (true, false) => "governs this member",
+        (false, true) => "governs its deflection",
+        (false, false) => return String::new(),
+    };
+    let others: Vec<&str> = (0..model.members.len())
+        .filter(|at| *at != member && results.alike[*at] == results.alike[member])
+        .map(|at| model.members[at].name.as_str())
+        .collect();
+    if others.is_empty() {
+        return words.to_owned();
+    }
+    format!(
+        "{words}, the worst of those alike in kind, section, material, length and limits; {} stand in the tables",
+        others.join(", ")
+    )
 }
 
 /// Second answers by another theory.

@@ -125,6 +125,26 @@ impl Solved {
         Ok(Package { sheet, document, markdown, results: self.json(), figures, beyond })
     }
 
+    /// The brief without results, for a checker who works independently first.
+    ///
+    /// # Errors
+    /// A template is at fault.
+    pub fn brief(&self, name: &str, text: &str, templates: &Templates) -> Result<Package, document::TemplateFault> {
+        let mut sheet = sheet::brief(&self.model);
+        let drawn = figures::draw(&self.model, &self.solution, &self.results);
+        // What follows from results is left out; so is every drawing made from them.
+        let of_input = |id: &str| id == "structure" || id == "signs" || id.starts_with("case.");
+        sheet.figures = drawn.into_iter().filter(|figure| of_input(&figure.id)).collect();
+        let origin = Origin { name, text, sha256: &self.sha256 };
+        let facts = facts::brief(&self.model, &sheet, origin);
+        let document = document::build(&facts, &templates.with_order("order-brief"))?;
+        let stem = name.strip_suffix(".yaml").or_else(|| name.strip_suffix(".yml")).unwrap_or(name);
+        let markdown = write::markdown::write(&document, &sheet, &format!("{stem}.brief"));
+        let figures =
+            sheet.figures.iter().map(|figure: &Figure| (figure.id.clone(), write::svg::write(figure))).collect();
+        Ok(Package { sheet, document, markdown, results: String::new(), figures, beyond: 0 })
+    }
+
     /// The PDF of a package.
     ///
     /// # Errors

@@ -5,7 +5,7 @@ use super::report::Coverage;
 use super::step::{PrintedStep, is_step_number};
 use super::table::PrintedTable;
 use super::trace::Cell;
-use super::verdict::{in_words, said};
+use super::verdict::said;
 use crate::formula::PrintedNumber;
 use std::collections::{BTreeMap, BTreeSet};
 
@@ -119,11 +119,11 @@ fn check_quotes(
         let verdict = (0..row.cells.len()).find(|at| heading(*at) == "verdict").and_then(|at| said(&row.cells[at]));
         let Some(verdict) = verdict else { continue };
         match (named.and_then(|step| step.comparison.as_ref().map(|c| (step, c))), quoting.as_slice()) {
-            (Some((step, comparison)), _) if comparison.ok != verdict => {
-                find(format!("the verdict of step {}", step.number), format!("`{}`", in_words(verdict)));
+            (Some((step, comparison)), _) if !verdict.suits(comparison.ok) => {
+                find(format!("the verdict of step {}", step.number), format!("`{}`", verdict.words()));
             }
-            (None, [(_, ratio)]) if ratio.unit.text.is_empty() && verdict != (ratio.printed.value() <= 1.0) => {
-                find(format!("the verdict that {ratio} has"), format!("`{}`", in_words(verdict)));
+            (None, [(_, ratio)]) if ratio.unit.text.is_empty() && !verdict.suits(ratio.printed.value() <= 1.0) => {
+                find(format!("the verdict that {ratio} has"), format!("`{}`", verdict.words()));
             }
             _ => {}
         }

@@ -8,24 +8,48 @@ use super::table::PrintedTable;
 use crate::formula::{PrintedNumber, parse_printed};
 use std::collections::BTreeMap;
 
-/// Whether words say that a limit is kept; `None` where they say neither.
-pub(super) fn said(text: &str) -> Option<bool> {
+/// What words say of a comparison.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub(super) enum Said {
+    Within,
+    Beyond,
+    NotChecked,
+}
+
+impl Said {
+    /// Whether it may be said of a step with that verdict: a limit kept may be called not checked, as where it is one
+    /// part of a check; one not kept may not.
+    pub(super) fn suits(self, ok: bool) -> bool {
+        match self {
+            Self::Within => ok,
+            Self::Beyond => !ok,
+            Self::NotChecked => ok,
+        }
+    }
+
+    /// In words.
+    pub(super) fn words(self) -> &'static str {
+        match self {
+            Self::Within => "OK",
+            Self::Beyond => "NOT OK",
+            Self::NotChecked => "NOT CHECKED",
+        }
+    }
+}
+
+/// What is said first in some words of a limit being kept; `None` where nothing is.
+pub(super) fn said(text: &str) -> Option<Said> {
     let text = text.to_lowercase();
     let mut words = text.split(|c: char| !c.is_alphanumeric()).filter(|word| !word.is_empty()).peekable();
     while let Some(word) = words.next() {
         match (word, words.peek()) {
-            ("not", Some(&"ok")) | ("beyond", _) => return Some(false),
-            ("not", Some(&"checked")) => return None,
-            ("ok" | "within", _) => return Some(true),
+            ("not", Some(&"ok")) | ("beyond", _) => return Some(Said::Beyond),
+            ("not", Some(&"checked")) => return Some(Said::NotChecked),
+            ("ok" | "within", _) => return Some(Said::Within),
             _ => {}
         }
     }
     None
-}
-
-/// The verdict in words.
-pub(super) fn in_words(ok: bool) -> &'static str {
-    if ok { "OK" } else { "NOT OK" }
 }
 
 /// Compares the verdict with the steps and with the tables of comparisons.
@@ -74,10 +98,10 @@ fn check_governing(package: &Package, findings: &mut Vec<Finding>, coverage: &mu
         let ok = step.comparison.as_ref().is_none_or(|comparison| comparison.ok);
         let after = text.split_once(',').map_or("", |(_, after)| after);
         match said(after) {
-            Some(said) if said == ok => {}
+            Some(said) if said.suits(ok) => {}
             found => {
-                let found = found.map_or("no verdict", in_words);
-                findings.push(Finding::at(*line, format!("`{}`", in_words(ok)), found));
+                let found = found.map_or("no verdict", Said::words);
+                findings.push(Finding::at(*line, if ok { "`OK`" } else { "`NOT OK`" }, found));
             }
         }
         if let Some(largest) = largest
@@ -98,9 +122,9 @@ fn check_counts(package: &Package, summary: Option<&PrintedTable>, findings: &mu
             let mut open = 0_i64;
             for cell in table.rows.iter().filter_map(|row| row.cells.get(column)) {
                 match said(cell) {
-                    Some(true) => within += 1,
-                    Some(false) => beyond += 1,
-                    None => open += 1,
+                    Some(Said::Within) => within += 1,
+                    Some(Said::Beyond) => beyond += 1,
+                    Some(Said::NotChecked) | None => open += 1,
                 }
             }
             not_checked = Some(open);

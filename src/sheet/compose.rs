@@ -21,6 +21,10 @@ pub struct Results {
     pub governing: Vec<usize>,
     /// The combination of each member's largest deflection against its limit, where that is checked.
     pub deflecting: Vec<Option<usize>>,
+    /// Members alike in kind, section, material, length, hinges and limits: each member's group.
+    pub alike: Vec<usize>,
+    /// Of each group, the member whose governing combination is the worst, and the one whose deflection is.
+    pub worst_of_group: Vec<(usize, Option<usize>)>,
     /// Energy of each combination.
     pub energy: Vec<Energy>,
     /// Checked movements of nodes again by virtual work.
@@ -48,7 +52,7 @@ pub fn results(model: &Model, solution: &Solution) -> Results {
     let mut silent = Silent;
     let prepared = prepare(&mut silent, model);
     let combinations = work_all(&mut silent, model, &prepared, solution);
-    let governing = (0..model.members.len()).map(|at| governing(model, &combinations, at)).collect();
+    let governing: Vec<usize> = (0..model.members.len()).map(|at| governing(model, &combinations, at)).collect();
     let worst = |wanted: &dyn Fn(&Check) -> bool| {
         let ratio =
             |work: &CombinationWork| work.checks.iter().filter(|c| wanted(c)).filter_map(|c| c.ratio).reduce(f64::max);
@@ -60,7 +64,8 @@ pub fn results(model: &Model, solution: &Solution) -> Results {
             .reduce(|best, next| if next.1 > best.1 * (1.0 + 1e-9) { next } else { best })
             .map(|(at, _)| at)
     };
-    let deflecting = model.members.iter().map(|m| worst(&|c| c.kind == "deflection" && c.subject == m.name)).collect();
+    let deflecting: Vec<Option<usize>> =
+        model.members.iter().map(|m| worst(&|c| c.kind == "deflection" && c.subject == m.name)).collect();
     let energy = model
         .combinations
         .iter()
@@ -85,29 +90,39 @@ pub fn results(model: &Model, solution: &Solution) -> Results {
         let supports = work::support_share(model, &solution.combinations[combination], &forces, *node, *direction);
         virtual_work.push(VirtualMovement { node: *node, direction: *direction, combination, shares, supports });
     }
-    Results { prepared, combinations, governing, deflecting, energy, virtual_work }
+    let alike = alike(model, &prepared);
+    let groups = alike.iter().max().map_or(0, |last| last + 1);
+    let worst_of_group = (0..groups)
+        .map(|group| {
+            let members: Vec<usize> = (0..alike.len()).filter(|at| alike[*at] == group).collect();
+            let rated = |wanted: &dyn Fn(usize) -> Option<f64>| {
+                members
+                    .iter()
+                    .filter_map(|at| wanted(*at).map(|ratio| (*at, ratio)))
+                    .reduce(|best, next| if next.1 > best.1 * (1.0 + 1e-9) { next } else { best })
+                    .map(|(at, _)| at)
+            };
+            let worst = rated(&|at| Some(score(&combinations[governing[at]], &model.members[at].name, at).0))
+                .or(members.first().copied());
+            let ratio_of = |at: usize| {
+                let name = &model.members[at].name;
+                let work = &combinations[deflecting[at]?];
+                work.checks
+                    .iter()
+                    .filter(|c| c.kind == "deflection" && c.subject == *name)
+                    .filter_map(|c| c.ratio)
+                    .reduce(f64::max)
+            };
+            (worst.unwrap_or(0), rated(&ratio_of))
+        })
+        .collect();
+    Results { prepared, combinations, governing, deflecting, alike, worst_of_group, energy, virtual_work }
 }
 
 /// The combination with the member's largest utilisation; without any, with its largest stress or force.
 fn governing(model: &Model, combinations: &[CombinationWork], member: usize) -> usize {
     let name = &model.members[member].name;
-    let is_node = |kind: &str| kind.starts_with("deflection.");
-    let score = |work: &CombinationWork| {
-        let ratio = work
-            .checks
-            .iter()
-            .filter(|c| c.subject == *name && !is_node(&c.kind))
-            .filter_map(|c| c.ratio)
-            .fold(0.0, f64::max);
-        let forces = &work.forces[member];
-        let stress = [work.extremes[member].tension, work.extremes[member].compression]
-            .into_iter()
-            .flatten()
-            .map(|e| e.value.si.abs())
-            .fold(0.0, f64::max);
-        let force = forces.n.iter().chain(&forces.m).flatten().map(|v| v.si.abs()).fold(0.0, f64::max);
-        (ratio, stress, force)
-    };
+    let score = |work: &CombinationWork| score(work, name, member);
     let mut best = 0;
     for at in 1..combinations.len() {
         let (new, old) = (score(&combinations[at]), score(&combinations[best]));
@@ -119,6 +134,50 @@ fn governing(model: &Model, combinations: &[CombinationWork], member: usize) -> 
         }
     }
     best
+}
+
+/// How hard a combination is on a member: largest utilisation, largest stress, largest force.
+fn score(work: &CombinationWork, name: &str, member: usize) -> (f64, f64, f64) {
+    let is_node = |kind: &str| kind.starts_with("deflection.");
+    let ratio = work
+        .checks
+        .iter()
+        .filter(|c| c.subject == name && !is_node(&c.kind))
+        .filter_map(|c| c.ratio)
+        .fold(0.0, f64::max);
+    let forces = &work.forces[member];
+    let stress = [work.extremes[member].tension, work.extremes[member].compression]
+        .into_iter()
+        .flatten()
+        .map(|e| e.value.si.abs())
+        .fold(0.0, f64::max);
+    let force = forces.n.iter().chain(&forces.m).flatten().map(|v| v.si.abs()).fold(0.0, f64::max);
+    (ratio, stress, force)
+}
+
+/// Groups of members alike in everything that a sheet of their own would show but their place and their forces.
+fn alike(model: &Model, prepared: &Prepared) -> Vec<usize> {
+    let mut groups: Vec<usize> = Vec::new();
+    let mut first: Vec<usize> = Vec::new();
+    for (at, member) in model.members.iter().enumerate() {
+        let same = first.iter().position(|other| {
+            let (o, length) = (&model.members[*other], prepared.bases[at].length);
+            o.kind == member.kind
+                && o.section == member.section
+                && o.material == member.material
+                && o.hinge == member.hinge
+                && o.tension_only == member.tension_only
+                && o.in_plane == member.in_plane
+                && o.out_of_plane == member.out_of_plane
+                && o.allowable == member.allowable
+                && (prepared.bases[*other].length - length).abs() <= 1e-9 * length
+        });
+        groups.push(same.unwrap_or_else(|| {
+            first.push(at);
+            first.len() - 1
+        }));
+    }
+    groups
 }
 
 /// Whether a member is worked line by line under a combination.
@@ -243,4 +302,16 @@ fn stated_forces(
         stated.bottom[end] = silent.bottom[end];
     }
     stated
+}
+
+/// The sheet of a brief without results: the input's tables, and tables of results left blank.
+#[must_use]
+pub fn brief(model: &Model) -> Sheet {
+    let mut sheet = Sheet::default();
+    let mut recording = Recording::new(&mut sheet, &model.display);
+    for table in chapter::brief_tables(model, &mut recording) {
+        recording.sheet.push_table(table);
+    }
+    digits::settle(&mut sheet, model.display.digits);
+    sheet
 }

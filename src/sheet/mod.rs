@@ -9,7 +9,7 @@ mod step;
 mod table;
 
 pub use chapter::{kind_word, quantity_text, ratio_text, sorted_checks};
-pub use compose::{Results, VirtualMovement, compose, is_worked, results};
+pub use compose::{Results, VirtualMovement, brief, compose, is_worked, results};
 pub use ledger::{Entry, Ledger, Rule};
 pub use recording::{Recording, within};
 pub use step::{Comparison, Step};

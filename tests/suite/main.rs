@@ -7,4 +7,5 @@ mod markdown;
 mod packages;
 mod promises;
 mod published;
+mod readme;
 mod tidy;

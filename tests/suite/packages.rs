@@ -76,7 +76,11 @@ fn every_step_of_every_demo_is_printed_once_and_closes() {
         }
         assert_eq!(printed.len(), package.sheet.steps.len(), "{}", path.display());
         for entry in package.sheet.ledger.entries().iter().filter(|entry| entry.printed.count == 0) {
-            assert!(!entry.printed.is_negative() && !entry.printed.digits().contains('−'), "{} is a negative zero", entry.address);
+            assert!(
+                !entry.printed.is_negative() && !entry.printed.digits().contains('−'),
+                "{} is a negative zero",
+                entry.address
+            );
         }
     }
 }

@@ -86,6 +86,21 @@ fn a_formula_changed_in_both_lines_does_not_close() {
 }
 
 #[test]
+fn what_is_beyond_its_limit_may_not_be_called_unchecked() {
+    let partly = SAMPLE
+        .replacen("| 0.9091 | within |", "| 0.9091 | NOT CHECKED: in one plane only |", 1)
+        .replacen("limit, OK (step", "limit, NOT CHECKED (step", 1)
+        .replacen("limit | 2 |", "limit | 1 |", 1)
+        .replacen("| Not checked | 1 |", "| Not checked | 2 |", 1);
+    assert!(report(&partly).ok(), "{}", report(&partly));
+    let beyond = partly.replacen("165 MPa, compression", "105 MPa, compression", 1);
+    let beyond = beyond.replacen("/(165 MPa)", "/(105 MPa)", 1).replacen("= 0.9091 ≤ 1 OK", "= 1.4286 > 1 NOT OK", 1);
+    let found = report(&beyond.replace("0.9091", "1.4286")).to_string();
+    assert!(found.contains("the verdict of step K1.C1.C01; found `NOT CHECKED`"), "{found}");
+    assert!(found.contains("expected `NOT OK`; found NOT CHECKED"), "{found}");
+}
+
+#[test]
 fn one_kind_of_step_gives_one_symbol() {
     let step = |subject: &str, symbol: &str| {
         format!("```step {subject}.G01\nLength\n{symbol} = l\n  = 5.000 m\n  = 5.000 m\nfrom: l T1.G01\n```\n\n")

@@ -1,4 +1,5 @@
 //! Tables of the sheet, one file a chapter.
+mod blank;
 mod comparison;
 mod input;
 mod result;
@@ -24,6 +25,13 @@ pub(super) fn tables(
 ) -> Vec<Table> {
     let mut tables = input::tables(model, sheet);
     tables.extend(result::tables(model, solution, results, worked, sheet));
+    tables
+}
+
+/// The input's tables and blank tables of results.
+pub(super) fn brief_tables(model: &Model, sheet: &mut Recording<'_>) -> Vec<Table> {
+    let mut tables = input::tables(model, sheet);
+    tables.extend(blank::tables(model, sheet));
     tables
 }
 

@@ -1,0 +1,37 @@
+//! Numbers as drawings print them.
+use crate::model::Display;
+use crate::units::{Measure, Printed};
+
+/// A value in its unit to that many significant digits, zeros at the end of a fraction left away.
+#[must_use]
+pub(super) fn number(value: f64, digits: i32) -> String {
+    if value == 0.0 || !value.is_finite() {
+        return "0".into();
+    }
+    let leading = value.abs().log10().floor() as i32;
+    let mut place = (leading - digits + 1).clamp(-12, 12);
+    // Whole numbers of a handy size are read more easily than powers of ten.
+    if place > 0 && leading < 6 {
+        place = 0;
+    }
+    let mut printed = Printed::nearest(value, place);
+    while printed.count != 0 && printed.count % 10 == 0 && printed.place < 0 {
+        printed = Printed { count: printed.count / 10, place: printed.place + 1 };
+    }
+    printed.to_string()
+}
+
+/// A value in SI, printed without its unit.
+#[must_use]
+pub(super) fn bare(display: &Display, measure: Measure, value: f64, digits: i32) -> String {
+    number(value / display.unit(measure).scale, digits)
+}
+
+/// A value in SI, printed with its unit.
+#[must_use]
+pub(super) fn quantity(display: &Display, measure: Measure, value: f64, digits: i32) -> String {
+    let unit = display.unit(measure);
+    let gap =
+        if unit.text.is_empty() || unit.text.starts_with('°') && unit.text.chars().count() == 1 { "" } else { " " };
+    format!("{}{gap}{}", number(value / unit.scale, digits), unit.text)
+}
