@@ -86,7 +86,8 @@ impl Head {
             let unit = column.unit.as_ref().map_or(String::new(), |unit| unit.text.to_string());
             Self::Symbol(symbol, unit)
         } else {
-            Self::words(&column.heading())
+            // Joiners keep a unit's fraction on one line.
+            Self::words(&column.heading().replace('/', "/\u{2060}"))
         }
     }
 

@@ -50,9 +50,9 @@ pub(super) struct Placed {
 /// Widths of a column at full size.
 #[derive(Debug, Clone, Default)]
 struct Natural {
-    /// Heading and cells on one line each, and each cell.
+    /// The widest on one line, and each by itself: heading first, then the cells.
     whole: f32,
-    cells: Vec<f32>,
+    texts: Vec<f32>,
     /// What cannot be turned over: the longest word, the numbers.
     least: f32,
     before_point: f32,
@@ -103,13 +103,13 @@ fn is_whole(natural: &[Natural], layout: &Layout) -> bool {
 
 /// Mean height of a row, with what small type, narrow gaps and a reach beyond the measure are worth.
 fn cost(natural: &[Natural], layout: &Layout, content: &Content2D) -> f32 {
-    let rows = content.rows.len().max(1);
+    let rows = content.rows.len() + 1;
     // Rows to be written in are high enough for two lines in any case.
     let least = if content.open { 2.0 } else { 1.0 };
     let lines: f32 = (0..rows)
         .map(|row| {
             let of = |column: &Placed| {
-                let cell = natural[column.index].cells.get(row).copied().unwrap_or(0.0) * layout.scale;
+                let cell = natural[column.index].texts.get(row).copied().unwrap_or(0.0) * layout.scale;
                 // Words do not fill their lines.
                 let loose = if cell > column.width + 0.01 { 1.12 } else { 1.0 };
                 (cell * loose / column.width.max(1.0) - 0.01).ceil()
@@ -175,7 +175,8 @@ fn parted(natural: &[Natural], room: f32) -> Vec<Layout> {
 }
 
 fn measured(content: &Content2D, at: usize, setter: &mut Setter<'_>) -> Natural {
-    let mut natural = Natural { cells: Vec::with_capacity(content.rows.len()), ..Natural::default() };
+    let mut natural = Natural { texts: Vec::with_capacity(content.rows.len() + 1), ..Natural::default() };
+    natural.texts.push(0.0);
     let mut empty = false;
     for row in &content.rows {
         let cell = match row.get(at) {
@@ -195,7 +196,7 @@ fn measured(content: &Content2D, at: usize, setter: &mut Setter<'_>) -> Natural 
                 0.0
             }
         };
-        natural.cells.push(cell);
+        natural.texts.push(cell);
     }
     let numbers = natural.before_point + natural.after_point;
     natural.open = content.open && empty;
@@ -206,8 +207,9 @@ fn measured(content: &Content2D, at: usize, setter: &mut Setter<'_>) -> Natural 
             (width, width)
         }
     };
+    natural.texts[0] = whole;
     natural.least = natural.least.max(numbers).max(longest);
     let open = if natural.open { OPEN } else { 0.0 };
-    natural.whole = natural.cells.iter().copied().fold(numbers.max(whole).max(open), f32::max);
+    natural.whole = natural.texts.iter().copied().fold(numbers.max(open), f32::max);
     natural
 }

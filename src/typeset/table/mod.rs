@@ -70,6 +70,9 @@ pub(super) fn of_sheet(table: &Table, column: Column<'_>, setter: &mut Setter<'_
     }
     slabs.extend(laid_out(&content, g.left, column, setter));
     if let Some(note) = &table.note {
+        if let Some(last) = slabs.last_mut() {
+            last.keep = true;
+        }
         slabs.extend(remark(note, column, setter));
     }
     space(&mut slabs, APART, APART);

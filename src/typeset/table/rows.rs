@@ -12,6 +12,8 @@ use std::rc::Rc;
 /// Distance from row to row over the size of type, and of rows left open for writing.
 const LEADING: f32 = 1.46;
 const OPEN: f32 = 2.6;
+/// A table of less than this part of a sheet's height is not parted.
+const WHOLE: f32 = 0.3;
 /// A little space after so many rows guides the eye along long tables.
 const GROUP: usize = 5;
 
@@ -41,6 +43,10 @@ pub(super) fn set(content: &Content2D, layout: &Layout, left: f32, setter: &mut 
             slab.height += 1.4;
         }
         slabs.push(slab);
+    }
+    let height: f32 = slabs.iter().map(|slab| slab.height).sum();
+    if height < WHOLE * g.body() {
+        slabs.iter_mut().take(count).for_each(|slab| slab.keep = true);
     }
     slabs
 }
