@@ -221,7 +221,10 @@ impl Paragraph {
                 let slack = ((room - width) / room).max(0.0);
                 let free = to + 1 == count || token.ends_line;
                 // The constant keeps the number of lines least; the square keeps them even.
-                let cost = best[to + 1].0 + if free { 1.0 } else { 1.0 + 4.0 * slack * slack };
+                // A last line of a word or so is avoided where the lines above can spare another.
+                let short = to + 1 == count && from > 0 && width < 0.16 * room;
+                let own = if free { 1.0 + if short { 0.3 } else { 0.0 } } else { 1.0 + 4.0 * slack * slack };
+                let cost = best[to + 1].0 + own;
                 if cost < choice.0 {
                     choice = (cost, to + 1);
                 }

@@ -22,6 +22,8 @@ const BETWEEN: f32 = 4.6;
 /// Column of the labels of fine print, and its distance from line to line over its size.
 const LABEL: f32 = 22.0;
 const FINE_LEADING: f32 = 1.42;
+/// Room that `by` takes beside the addresses, with the space before it.
+const BESIDE: f32 = 30.0;
 /// Space below a step.
 const BELOW: f32 = 13.0;
 
@@ -30,8 +32,9 @@ pub(super) fn set(step: &Step, sheet: &Sheet, setter: &mut Setter<'_>, geometry:
     let mut page = StepPage { sheet, setter, geometry, slabs: Vec::new() };
     page.title(step);
     page.formula(step);
-    page.addresses(step);
-    page.remarks(step);
+    let by = by(step);
+    let said = page.addresses(step, by.as_deref());
+    page.remarks([("by", if said { None } else { by.as_deref() }), ("note", step.note.as_deref())]);
     let last = page.slabs.len().saturating_sub(1);
     for (at, slab) in page.slabs.iter_mut().enumerate() {
         slab.keep = at < last;
@@ -64,7 +67,7 @@ impl StepPage<'_, '_> {
         let number = Type::new(FaceName::Bold, SMALL);
         let width = self.setter.set(&mut frame, &step.number, number, g.left, BASELINE);
         tick(&mut frame, g, BASELINE);
-        if width > g.text - g.left - 8.0 {
+        if width > g.text - g.left - 10.0 {
             self.push(frame, LEADING, 0.0);
             frame = Frame::default();
         }
@@ -185,10 +188,11 @@ impl StepPage<'_, '_> {
         self.push(frame, baseline + 0.3 * FORMULA, 0.0);
     }
 
-    /// Each symbol with the address it was taken from.
-    fn addresses(&mut self, step: &Step) {
+    /// Each symbol with the address it was taken from; what the step rests on stands beside them where there is
+    /// room, which is what is returned.
+    fn addresses(&mut self, step: &Step, by: Option<&str>) -> bool {
         if step.operands.is_empty() {
-            return;
+            return false;
         }
         let g = *self.geometry;
         let fine = Type::new(FaceName::Regular, FINE);
@@ -220,7 +224,14 @@ impl StepPage<'_, '_> {
                 x += 1.5 + self.setter.set(&mut frame, " · ", fine, x + 1.5, y) + 1.5;
             }
         }
+        let room = by.is_some_and(|by| x + BESIDE + self.setter.width(by, fine) <= g.right);
+        if let (true, Some(by)) = (room, by) {
+            x += BESIDE - LABEL + 8.0;
+            x += self.setter.set(&mut frame, "by ", Type::new(FaceName::Italic, FINE), x, y) + 1.0;
+            self.setter.set(&mut frame, by, fine, x, y);
+        }
         self.push(frame, y + 0.25 * FINE, 0.0);
+        room
     }
 
     /// An address that leads to its place, cut where it alone is wider than the line.
@@ -250,11 +261,8 @@ impl StepPage<'_, '_> {
         end
     }
 
-    fn remarks(&mut self, step: &Step) {
-        let source = step.definition.source().map(|source| source.short);
-        let by: Vec<&str> = source.into_iter().chain(step.by.as_deref()).collect();
-        let by = (!by.is_empty()).then(|| by.join("; "));
-        for (label, text) in [("by", by.as_deref()), ("note", step.note.as_deref())] {
+    fn remarks(&mut self, remarks: [(&str, Option<&str>); 2]) {
+        for (label, text) in remarks {
             let Some(text) = text else { continue };
             let paragraph = Paragraph::plain(text, Type::new(FaceName::Regular, FINE));
             self.slabs.extend(labelled(label, &paragraph, self.setter, self.geometry));
@@ -277,6 +285,13 @@ pub(super) fn labelled(label: &str, text: &Paragraph, setter: &mut Setter<'_>, g
         slabs.push(Slab { frame, height: leading, ..Slab::default() });
     }
     slabs
+}
+
+/// The published source of the formula, then the method or clause of the step.
+fn by(step: &Step) -> Option<String> {
+    let source = step.definition.source().map(|source| source.short);
+    let by: Vec<&str> = source.into_iter().chain(step.by.as_deref()).collect();
+    (!by.is_empty()).then(|| by.join("; "))
 }
 
 /// A square to tick and a line for initials, in the checker's column.

@@ -6,7 +6,7 @@ use crate::formula::Tree;
 const OVERHANG: f32 = 0.08;
 const OUTSIDE: f32 = 0.1;
 /// Least air above and below the rule, ems; the face's own least is for fractions within running text.
-const AIR: f32 = 0.11;
+const AIR: f32 = 0.16;
 
 impl Maths<'_, '_> {
     pub(super) fn fraction(&mut self, above: &Tree, below: &Tree, filling: Filling<'_>, size: f32, depth: u8) -> Box2 {

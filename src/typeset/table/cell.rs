@@ -40,6 +40,10 @@ impl Content {
         }
     }
 
+    pub(super) fn is_empty(&self) -> bool {
+        matches!(self, Self::Empty)
+    }
+
     /// A row's name.
     pub(super) fn name(name: &str) -> Self {
         Self::Words(Paragraph::plain(name, CELL))
@@ -69,14 +73,21 @@ impl Head {
 
     pub(super) fn of(column: &Column) -> Self {
         let symbol = Symbol::owned(column.symbol.clone());
-        let stem = symbol.stem().chars().count();
-        let letters = symbol.stem().chars().all(char::is_alphabetic);
-        // Headings of more letters than a symbol has are words.
-        if (1..=2).contains(&stem) && letters {
+        let mut stem = symbol.stem().chars();
+        let is_symbol = match (stem.next(), stem.next(), stem.next()) {
+            (Some(letter), None, _) => letter.is_alphabetic(),
+            // Two letters are a symbol where the first is a capital or Greek (`Fx`, `Δx`), else a word (`to`, `in`).
+            (Some(first), Some(second), None) => {
+                second.is_alphabetic() && (first.is_uppercase() || ('α'..='ω').contains(&first))
+            }
+            _ => false,
+        };
+        if is_symbol {
             let unit = column.unit.as_ref().map_or(String::new(), |unit| unit.text.to_string());
             Self::Symbol(symbol, unit)
         } else {
-            Self::words(&column.heading())
+            // Joiners keep a unit's fraction on one line.
+            Self::words(&column.heading().replace('/', "/\u{2060}"))
         }
     }
 

@@ -54,7 +54,7 @@ pub(super) fn of_sheet(table: &Table, column: Column<'_>, setter: &mut Setter<'_
     let bold = Type::new(FaceName::Bold, SMALL);
     let width = setter.set(&mut frame, &table.id, bold, g.left, BASELINE);
     tick(&mut frame, g, BASELINE);
-    if width > g.text - g.left - 8.0 {
+    if width > g.text - g.left - 10.0 {
         slabs.push(Slab { frame: std::mem::take(&mut frame), height: LEADING, keep: true, ..Slab::default() });
     }
     let title = Paragraph::plain(&table.title, Type::new(FaceName::Regular, SMALL + 1.0));
@@ -70,6 +70,9 @@ pub(super) fn of_sheet(table: &Table, column: Column<'_>, setter: &mut Setter<'_
     }
     slabs.extend(laid_out(&content, g.left, column, setter));
     if let Some(note) = &table.note {
+        if let Some(last) = slabs.last_mut() {
+            last.keep = true;
+        }
         slabs.extend(remark(note, column, setter));
     }
     space(&mut slabs, APART, APART);
@@ -93,9 +96,13 @@ pub(super) fn of_words(
         heads: (0..width).map(|at| Head::inline(head.get(at).map_or(&[], Vec::as_slice))).collect(),
         rows: rows.iter().map(|row| (0..width).map(|at| cell(row, at)).collect()).collect(),
         anchors: vec![None; rows.len()],
-        open: rows.iter().any(|row| (0..width).any(|at| matches!(cell(row, at), Content::Empty))),
+        // A column with a heading and nothing else is there to be written in.
+        open: !rows.is_empty()
+            && (0..width)
+                .any(|at| rows.iter().all(|row| row.get(at).is_none_or(|words| Content::inline(words).is_empty()))),
     };
-    let mut slabs = laid_out(&content, column.left, column, setter);
+    let widest_left = if column.left > column.geometry.text { column.left } else { column.geometry.left };
+    let mut slabs = laid_out(&content, widest_left, column, setter);
     space(&mut slabs, APART, APART);
     slabs
 }

@@ -1,7 +1,7 @@
 //! Sets the head and the rows of a table as strips.
 use super::Content2D;
 use super::cell::{CELL, Content, Head};
-use super::columns::{GAP, Layout, Placed};
+use super::columns::{Layout, Placed};
 use crate::typeset::FaceName;
 use crate::typeset::flow::Slab;
 use crate::typeset::frame::{Anchor, Frame, Item, Rule};
@@ -12,14 +12,14 @@ use std::rc::Rc;
 /// Distance from row to row over the size of type, and of rows left open for writing.
 const LEADING: f32 = 1.46;
 const OPEN: f32 = 2.6;
+/// A table of less than this part of a sheet's height is not parted.
+const WHOLE: f32 = 0.3;
 /// A little space after so many rows guides the eye along long tables.
 const GROUP: usize = 5;
 
 pub(super) fn set(content: &Content2D, layout: &Layout, left: f32, setter: &mut Setter<'_>, g: &Geometry) -> Vec<Slab> {
-    let width: f32 = layout.columns.iter().map(|column| column.width).sum::<f32>()
-        + GAP * layout.scale * layout.columns.len().saturating_sub(1) as f32;
     // Rules may not reach past the text even where a column was rounded up.
-    let width = width.min(g.right - left);
+    let width = layout.width().min(g.right - left);
     let count = content.rows.len();
     let mut head = head(content, layout, left, width, setter);
     let mut slabs = vec![Slab { frame: head.frame.clone(), height: head.height, keep: count > 0, ..Slab::default() }];
@@ -43,6 +43,10 @@ pub(super) fn set(content: &Content2D, layout: &Layout, left: f32, setter: &mut 
             slab.height += 1.4;
         }
         slabs.push(slab);
+    }
+    let height: f32 = slabs.iter().map(|slab| slab.height).sum();
+    if height < WHOLE * g.body() {
+        slabs.iter_mut().take(count).for_each(|slab| slab.keep = true);
     }
     slabs
 }
@@ -95,7 +99,7 @@ fn head(content: &Content2D, layout: &Layout, left: f32, width: f32, setter: &mu
                 frame.shift(from, x + shift, size + leading * (lines - 1) as f32);
             }
         }
-        x += column.width + GAP * layout.scale;
+        x += column.width + layout.gap;
     }
     let height = leading * lines as f32 + 0.35 * size;
     thin(&mut frame, left, height, width, 0.7);
@@ -130,12 +134,12 @@ fn row(content: &Content2D, at: usize, layout: &Layout, left: f32, setter: &mut 
             Some(Content::Number(text, split)) => number(text, *split, *column, layout.scale, x, setter, &mut frame),
             _ => {}
         }
-        x += column.width + GAP * layout.scale;
+        x += column.width + layout.gap;
     }
     let height = leading + size * 1.25 * (lines - 1) as f32;
     if content.open {
         // Words stand low, on the line that is left to write on.
-        let spare = (size * OPEN - height).max(0.0);
+        let spare = (size * OPEN - height).max(size * 0.5);
         frame.shift(0, 0.0, spare);
         frame.links.iter_mut().for_each(|link| link.y += spare);
         return Slab { frame, height: height + spare, ..Slab::default() };
