@@ -10,7 +10,7 @@ pub(super) const HEIGHT: f64 = 115.0;
 /// Size of labels, points.
 pub(super) const SIZE: f64 = 7.5;
 /// Blank edge, mm.
-const EDGE: f64 = 1.0;
+const EDGE: f64 = 1.5;
 
 /// Black line of a width in mm.
 pub(super) const fn ink(width: f64) -> Stroke {

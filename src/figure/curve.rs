@@ -122,7 +122,6 @@ fn at(curve: &[(f64, f64)], x: f64) -> f64 {
 
 /// A circled plus or minus inside each part of one sign that has room for it.
 fn marks(canvas: &mut Canvas, view: &View<'_>, member: &crate::model::Member, curve: &[(f64, f64)], factor: f64) {
-    let (_, axis, normal) = view.axes(member);
     let mut from = 0;
     while from < curve.len() {
         let positive = curve[from].1 > 0.0;
@@ -144,7 +143,6 @@ fn marks(canvas: &mut Canvas, view: &View<'_>, member: &crate::model::Member, cu
             if (v * factor).abs() > 3.0 && inset > 1.4 {
                 let centre = view.on(member, x, v * factor / 2.0);
                 canvas.circle(centre, 1.1, Some(ink(0.15)), 1.0);
-                let _ = (axis, normal);
                 canvas.line(along(centre, [1.0, 0.0], -0.7), along(centre, [1.0, 0.0], 0.7), ink(0.15), Clear::Hard);
                 if positive {
                     canvas.line(
@@ -179,14 +177,16 @@ fn values(
         said.extend((count > 0).then_some(count / 2));
     } else {
         for k in 0..count {
-            let end = k == 0 || k + 1 == count;
-            let jump = (k > 0 && (curve[k - 1].0 - curve[k].0).abs() < 1e-9 * length)
-                || (k + 1 < count && (curve[k + 1].0 - curve[k].0).abs() < 1e-9 * length);
-            let peak = !end && {
-                let (v, a, b) = (curve[k].1, curve[k - 1].1, curve[k + 1].1);
-                v.abs() >= a.abs() && v.abs() > b.abs()
+            let here = curve[k];
+            let same = |other: &(f64, f64)| (other.0 - here.0).abs() < 1e-9 * length;
+            let before = curve[..k].iter().rev().find(|p| !same(p));
+            let after = curve[k + 1..].iter().find(|p| !same(p));
+            let jump = curve.iter().any(|p| same(p) && (p.1 - here.1).abs() > small);
+            let peak = match (before, after) {
+                (Some(a), Some(b)) => here.1.abs() >= a.1.abs() && here.1.abs() > b.1.abs(),
+                _ => true,
             };
-            if end || peak || jump && (curve[k].1.abs() > 0.1 * largest) {
+            if peak || jump && here.1.abs() > 0.1 * largest {
                 said.push(k);
             }
         }
@@ -326,15 +326,15 @@ pub fn utilisation(model: &Model, usage: &[Usage]) -> Figure {
         member::name(&mut canvas, &view, member, if beyond { Style::Bold } else { Style::Regular }, &said);
     }
     let y = view.point([0.0, model.nodes.iter().map(|n| n.y).fold(f64::INFINITY, f64::min)])[1] + 14.0;
-    let mut x = 8.0;
+    let mut x = 3.0;
     for (_, width, words) in BANDS {
         canvas.line([x, y], [x + 7.0, y], ink(width), Clear::Hard);
         canvas.fixed([x + 8.5, y + 0.9], Anchor::Start, SIZE, Style::Regular, words);
-        x += 12.5 + text::width(words, SIZE);
+        x += 10.5 + text::width(words, SIZE);
     }
     if usage.iter().any(|u| u.ratio.is_none() || u.unchecked) {
         canvas.line([x, y], [x + 7.0, y], line(0.3, Dash::Dashed, 0.0), Clear::Hard);
-        canvas.fixed([x + 8.5, y + 0.9], Anchor::Start, SIZE, Style::Regular, "NOT CHECKED, wholly or in part (*)");
+        canvas.fixed([x + 8.5, y + 0.9], Anchor::Start, SIZE, Style::Regular, "* NOT CHECKED in part or whole");
     }
     let said: Vec<String> = model
         .members

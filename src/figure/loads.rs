@@ -19,9 +19,19 @@ pub fn load_case(model: &Model, case: &LoadCase) -> Figure {
     support::draw(&mut canvas, &view, 0.15);
     member::draw_plain(&mut canvas, &view, 0.3, 0.35);
     member::joints(&mut canvas, &view);
-    let mut sheet = Sheet { canvas, view, case, combs: comb::Stack::new(model, case) };
+    let mut sheet = Sheet { canvas, view, case, combs: comb::Stack::new(case) };
+    let warm = warm_throughout(model, case);
     for load in &case.loads {
-        sheet.load(&load.acts);
+        let said_once = matches!((&load.acts, warm), (Action::Member { load: MemberLoad::Warm { top, bottom }, .. }, Some(k))
+            if *top == k && *bottom == k);
+        if !said_once {
+            sheet.load(&load.acts);
+        }
+    }
+    if let Some(kelvin) = warm {
+        let sign = if kelvin > 0.0 { "+" } else { "" };
+        let words = format!("All members {sign}{}", sheet.say(Measure::Temperature, kelvin));
+        sheet.canvas.note(words);
     }
     let Sheet { mut canvas, view, .. } = sheet;
     if case.self_weight != 0.0 {
@@ -117,7 +127,7 @@ impl Sheet<'_> {
     fn beside(&mut self, at: usize, length: f64, words: String) {
         let member = &self.view.model.members[at];
         let (_, _, normal) = self.view.axes(member);
-        let anchors = [0.5, 0.65, 0.35, 0.75, 0.25].map(|t| self.view.on(member, t * length, 0.0)).to_vec();
+        let anchors = [0.7, 0.5, 0.6, 0.35, 0.25].map(|t| self.view.on(member, t * length, 0.0)).to_vec();
         self.canvas.label(Wish { anchors, toward: Some(normal), gap: 1.0 }, Style::Regular, words);
     }
 
@@ -128,22 +138,23 @@ impl Sheet<'_> {
             return;
         }
         let direction = [force[0] / size, -force[1] / size];
-        let largest = largest_force(self.view.model, self.case);
+        let largest = largest_force(self.case);
         let long = 6.0 + 5.0 * size / largest.max(size);
-        let blocked = node.is_some_and(|node| {
+        let lies = |sense: f64| {
             let model = self.view.model;
-            let in_the_way = model.members.iter().any(|m| {
-                let (_, axis, _) = self.view.axes(m);
-                let out = if m.from == node { axis } else { axis.map(|v| -v) };
-                (m.from == node || m.to == node) && -(out[0] * direction[0] + out[1] * direction[1]) > 0.93
-            });
-            let into_member = model.members.iter().any(|m| {
-                let (_, axis, _) = self.view.axes(m);
-                let out = if m.from == node { axis } else { axis.map(|v| -v) };
-                (m.from == node || m.to == node) && out[0] * direction[0] + out[1] * direction[1] > 0.93
-            });
-            in_the_way && !into_member
-        });
+            node.is_some_and(|node| {
+                model.members.iter().filter(|m| m.from == node || m.to == node).any(|m| {
+                    let (_, axis, _) = self.view.axes(m);
+                    let out = if m.from == node { axis } else { axis.map(|v| -v) };
+                    sense * (out[0] * direction[0] + out[1] * direction[1]) > 0.93
+                })
+            })
+        };
+        // Members on both sides: the arrow stands beside them, on the left of its way or above.
+        let (behind, ahead) = (lies(-1.0), lies(1.0));
+        let beside = if direction[1].abs() < 0.5 { [0.0, -1.0] } else { [-1.0, 0.0] };
+        let at = if behind && ahead { along(at, beside, 2.2) } else { at };
+        let blocked = behind;
         let (tail, tip) = if blocked {
             (along(at, direction, 1.0), along(at, direction, 1.0 + long))
         } else {
@@ -194,8 +205,20 @@ impl Sheet<'_> {
     }
 }
 
+/// The even warming that every member gets, K, where it is the same for all.
+fn warm_throughout(model: &Model, case: &LoadCase) -> Option<f64> {
+    let even = |load: &crate::model::Load| match &load.acts {
+        Action::Member { member, load: MemberLoad::Warm { top, bottom } } if top == bottom => Some((*member, *top)),
+        _ => None,
+    };
+    let (_, kelvin) = case.loads.iter().find_map(even)?;
+    let all: Vec<usize> = case.loads.iter().filter_map(even).filter(|(_, k)| *k == kelvin).map(|(m, _)| m).collect();
+    let once = |at: usize| all.iter().filter(|m| **m == at).count() == 1;
+    (model.members.len() > 1 && (0..model.members.len()).all(once)).then_some(kelvin)
+}
+
 /// Largest force of a case, N.
-fn largest_force(_model: &Model, case: &LoadCase) -> f64 {
+fn largest_force(case: &LoadCase) -> f64 {
     case.loads
         .iter()
         .map(|load| match &load.acts {

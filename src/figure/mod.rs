@@ -32,3 +32,15 @@ pub struct Figure {
     /// The drawing.
     pub scene: Scene,
 }
+
+impl TextItem {
+    /// The rectangle that it fills in the widest usual serif face: left, top, right, bottom, mm.
+    #[must_use]
+    pub fn extent(&self) -> [f64; 4] {
+        let area = canvas::extent(self.at, self.anchor, self.size, &self.text);
+        [area.low[0], area.low[1], area.high[0], area.high[1]]
+    }
+}
+
+#[cfg(test)]
+mod tests;

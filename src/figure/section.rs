@@ -7,7 +7,7 @@ use crate::model::{Display, Section};
 use crate::units::Measure;
 
 /// Largest size of the outline, mm.
-const ROOM: [f64; 2] = [56.0, 46.0];
+const ROOM: [f64; 2] = [46.0, 34.0];
 
 /// The figure `section.<name>`; `None` where the shape has no outline.
 #[must_use]

@@ -8,9 +8,9 @@ use super::scene::{Anchor, Dash, Style};
 pub fn signs() -> Figure {
     let mut canvas = Canvas::default();
     global(&mut canvas, [10.0, 30.0]);
-    own(&mut canvas, [46.0, 30.0], [74.0, 14.0]);
-    piece(&mut canvas, [102.0, 22.0]);
-    let heads = [(18.0, "Global axes"), (62.0, "A member's own axes"), (124.0, "Positive N, V and M")];
+    own(&mut canvas, [46.0, 30.0], [70.0, 15.0]);
+    piece(&mut canvas, [104.0, 22.0]);
+    let heads = [(18.0, "Global axes"), (60.0, "A member's own axes"), (122.0, "Positive N, V and M")];
     for (x, words) in heads {
         canvas.fixed([x, 42.0], Anchor::Middle, SIZE, Style::Bold, words);
     }
@@ -54,7 +54,7 @@ fn own(canvas: &mut Canvas, from: [f64; 2], to: [f64; 2]) {
 }
 
 fn piece(canvas: &mut Canvas, left: [f64; 2]) {
-    let (long, half) = (44.0, 5.0);
+    let (long, half) = (36.0, 5.0);
     let right = left[0] + long;
     let y = left[1];
     canvas.shape(
@@ -66,10 +66,10 @@ fn piece(canvas: &mut Canvas, left: [f64; 2]) {
     canvas.fixed([left[0] + long / 2.0, y - 1.8], Anchor::Middle, SIZE, Style::Regular, "top (+y face)");
     canvas.fixed([left[0] + long / 2.0, y + 3.8], Anchor::Middle, SIZE, Style::Regular, "bottom (−y face)");
     let force = ink(0.4);
-    canvas.arrow([right + 1.0, y], [right + 9.0, y], force, Clear::Hard);
-    canvas.fixed([right + 7.0, y - 1.4], Anchor::Middle, SIZE, Style::Italic, "N");
-    canvas.arrow([left[0] - 1.0, y], [left[0] - 9.0, y], force, Clear::Hard);
-    canvas.fixed([left[0] - 7.0, y - 1.4], Anchor::Middle, SIZE, Style::Italic, "N");
+    canvas.arrow([right + 1.0, y], [right + 13.0, y], force, Clear::Hard);
+    canvas.fixed([right + 13.6, y + 0.9], Anchor::Start, SIZE, Style::Italic, "N");
+    canvas.arrow([left[0] - 1.0, y], [left[0] - 13.0, y], force, Clear::Hard);
+    canvas.fixed([left[0] - 13.6, y + 0.9], Anchor::End, SIZE, Style::Italic, "N");
     canvas.arrow([right + 2.0, y - 4.0], [right + 2.0, y + 9.0], force, Clear::Hard);
     canvas.fixed([right + 2.0, y + 12.4], Anchor::Middle, SIZE, Style::Italic, "V");
     canvas.arrow([left[0] - 2.0, y + 4.0], [left[0] - 2.0, y - 9.0], force, Clear::Hard);

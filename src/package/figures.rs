@@ -156,3 +156,6 @@ fn usage(model: &Model, results: &Results) -> Vec<Usage> {
         })
         .collect()
 }
+
+#[cfg(test)]
+mod tests;

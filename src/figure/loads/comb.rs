@@ -4,7 +4,7 @@ use crate::figure::number::quantity;
 use crate::figure::place::Wish;
 use crate::figure::scene::Style;
 use crate::figure::view::View;
-use crate::model::{Action, Direction, LoadCase, MemberLoad, Model};
+use crate::model::{Action, Direction, LoadCase, MemberLoad};
 use crate::units::Measure;
 
 /// Tallest arrow, mm.
@@ -19,7 +19,7 @@ pub(super) struct Stack {
 }
 
 impl Stack {
-    pub(super) fn new(_model: &Model, case: &LoadCase) -> Self {
+    pub(super) fn new(case: &LoadCase) -> Self {
         let largest = case.loads.iter().filter_map(|load| match &load.acts {
             Action::Member { load: MemberLoad::Line { start, end, .. }, .. } => Some(start.abs().max(end.abs())),
             _ => None,
