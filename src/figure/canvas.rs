@@ -130,6 +130,13 @@ impl Canvas {
         self.notes.push(text.into());
     }
 
+    /// Whether nothing that labels keep off stands within so much of a point.
+    pub(super) fn is_free(&self, at: [f64; 2], around: f64) -> bool {
+        let area = Area::about(at, [around; 2]);
+        !self.taken.areas.iter().any(|other| area.meets(other))
+            && !self.taken.hard.iter().any(|line| area.crossed(line))
+    }
+
     fn keep_clear(&mut self, points: &[[f64; 2]], closed: bool, clear: Clear) {
         let list = match clear {
             Clear::Hard => &mut self.taken.hard,
@@ -151,7 +158,7 @@ impl Canvas {
     pub(super) fn finish(mut self) -> Scene {
         let sheet = Area { low: [EDGE, EDGE - 20.0], high: [WIDTH - EDGE, HEIGHT + 20.0] };
         let sheet = self.extent().map_or(sheet, |drawn| {
-            let spare = (HEIGHT - 6.0 - (drawn.high[1] - drawn.low[1])).max(0.0).min(24.0);
+            let spare = (HEIGHT - 6.0 - (drawn.high[1] - drawn.low[1])).clamp(0.0, 24.0);
             Area { low: [EDGE, drawn.low[1] - spare / 2.0], high: [WIDTH - EDGE, drawn.high[1] + spare / 2.0] }
         });
         let mut keyed = 0;

@@ -1,7 +1,7 @@
 //! Curves along members: diagrams, shapes of movement, and members weighted by their ratio.
 use super::canvas::{Canvas, Clear, SIZE, along, ink, line};
 use super::member;
-use super::number::{number, quantity};
+use super::number::{exact, number, quantity};
 use super::place::Wish;
 use super::scene::{Anchor, Dash, Style};
 use super::structure::node_names;
@@ -38,7 +38,10 @@ pub fn diagram(model: &Model, diagram: &Diagram) -> Option<Figure> {
     let view = View::new(model, Room { side: 22.0, above: 15.0, below: 17.0 });
     support::draw(&mut canvas, &view, 0.15);
     let sense = if diagram.letter == "M" { -1.0 } else { 1.0 };
-    let factor = sense * TALLEST / largest;
+    // Short members have little room beside them.
+    let shortest = model.members.iter().map(|m| view.axes(m).0 * view.scale).fold(f64::INFINITY, f64::min);
+    let tallest = (0.5 * shortest).clamp(6.0, TALLEST).round();
+    let factor = sense * tallest / largest;
     for (member, curve) in model.members.iter().zip(&diagram.curves) {
         strip(&mut canvas, &view, member, curve, factor);
     }
@@ -62,7 +65,7 @@ pub fn diagram(model: &Model, diagram: &Diagram) -> Option<Figure> {
     Some(Figure {
         id: format!("{}.{}", diagram.combination, diagram.letter),
         title: format!(
-            "{word} {} under {}, in {}: {side}. Largest {most}, drawn {TALLEST} mm tall. Structure {}.",
+            "{word} {} under {}, in {}: {side}. Largest {most}, drawn {tallest} mm tall. Structure {}.",
             diagram.letter,
             diagram.combination,
             unit.text,
@@ -140,7 +143,7 @@ fn marks(canvas: &mut Canvas, view: &View<'_>, member: &crate::model::Member, cu
         if let Some(k) = widest {
             let (x, v) = curve[k];
             let inset = (x - curve[from].0).min(curve[to].0 - x) * view.scale;
-            if (v * factor).abs() > 3.0 && inset > 1.4 {
+            if (v * factor).abs() > 3.0 && inset > 1.4 && canvas.is_free(view.on(member, x, v * factor / 2.0), 1.2) {
                 let centre = view.on(member, x, v * factor / 2.0);
                 canvas.circle(centre, 1.1, Some(ink(0.15)), 1.0);
                 canvas.line(along(centre, [1.0, 0.0], -0.7), along(centre, [1.0, 0.0], 0.7), ink(0.15), Clear::Hard);
@@ -197,7 +200,7 @@ fn values(
             continue;
         }
         let tip = view.on(member, x, v * factor);
-        let words = number(v / unit, 3);
+        let words = exact(v / unit, 3);
         if canvas.said_near(&words, tip, 3.0) {
             continue;
         }

@@ -23,7 +23,7 @@ pub fn load_case(model: &Model, case: &LoadCase) -> Figure {
     let warm = warm_throughout(model, case);
     for load in &case.loads {
         let said_once = matches!((&load.acts, warm), (Action::Member { load: MemberLoad::Warm { top, bottom }, .. }, Some(k))
-            if *top == k && *bottom == k);
+            if same(*top, k) && same(*bottom, k));
         if !said_once {
             sheet.load(&load.acts);
         }
@@ -154,7 +154,9 @@ impl Sheet<'_> {
         let (behind, ahead) = (lies(-1.0), lies(1.0));
         let beside = if direction[1].abs() < 0.5 { [0.0, -1.0] } else { [-1.0, 0.0] };
         let at = if behind && ahead { along(at, beside, 2.2) } else { at };
-        let blocked = behind;
+        // A tail pointing down would stand in the support's symbol.
+        let held = node.is_some_and(|node| self.view.model.supports.iter().any(|s| s.node == node));
+        let blocked = behind || held && direction[1] < -0.9 && !ahead;
         let (tail, tip) = if blocked {
             (along(at, direction, 1.0), along(at, direction, 1.0 + long))
         } else {
@@ -205,14 +207,22 @@ impl Sheet<'_> {
     }
 }
 
+/// Whether two temperatures are one.
+fn same(a: f64, b: f64) -> bool {
+    (a - b).abs() < 1e-12
+}
+
 /// The even warming that every member gets, K, where it is the same for all.
 fn warm_throughout(model: &Model, case: &LoadCase) -> Option<f64> {
     let even = |load: &crate::model::Load| match &load.acts {
-        Action::Member { member, load: MemberLoad::Warm { top, bottom } } if top == bottom => Some((*member, *top)),
+        Action::Member { member, load: MemberLoad::Warm { top, bottom } } if same(*top, *bottom) => {
+            Some((*member, *top))
+        }
         _ => None,
     };
     let (_, kelvin) = case.loads.iter().find_map(even)?;
-    let all: Vec<usize> = case.loads.iter().filter_map(even).filter(|(_, k)| *k == kelvin).map(|(m, _)| m).collect();
+    let all: Vec<usize> =
+        case.loads.iter().filter_map(even).filter(|(_, k)| same(*k, kelvin)).map(|(m, _)| m).collect();
     let once = |at: usize| all.iter().filter(|m| **m == at).count() == 1;
     (model.members.len() > 1 && (0..model.members.len()).all(once)).then_some(kelvin)
 }

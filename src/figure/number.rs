@@ -5,20 +5,27 @@ use crate::units::{Measure, Printed};
 /// A value in its unit to that many significant digits, zeros at the end of a fraction left away.
 #[must_use]
 pub(super) fn number(value: f64, digits: i32) -> String {
-    if value == 0.0 || !value.is_finite() {
-        return "0".into();
-    }
-    let leading = value.abs().log10().floor() as i32;
-    let mut place = (leading - digits + 1).clamp(-12, 12);
-    // Whole numbers of a handy size are read more easily than powers of ten.
-    if place > 0 && leading < 6 {
-        place = 0;
-    }
-    let mut printed = Printed::nearest(value, place);
+    let mut printed = rounded(value, digits);
     while printed.count != 0 && printed.count % 10 == 0 && printed.place < 0 {
         printed = Printed { count: printed.count / 10, place: printed.place + 1 };
     }
     printed.to_string()
+}
+
+/// A value in its unit to that many significant digits, each of them printed.
+#[must_use]
+pub(super) fn exact(value: f64, digits: i32) -> String {
+    rounded(value, digits).to_string()
+}
+
+fn rounded(value: f64, digits: i32) -> Printed {
+    if value == 0.0 || !value.is_finite() {
+        return Printed { count: 0, place: 0 };
+    }
+    let leading = value.abs().log10().floor() as i32;
+    let place = (leading - digits + 1).clamp(-12, 12);
+    // Whole numbers of a handy size are read more easily than powers of ten.
+    Printed::nearest(value, if place > 0 && leading < 6 { 0 } else { place })
 }
 
 /// A value in SI, printed without its unit.

@@ -61,7 +61,7 @@ fn the_moment_of_a_simply_supported_beam_lies_below_it() {
     let drawn = diagram(&model, &Diagram { letter: "M", combination: "L".into(), curves }).map(|f| f.scene);
     let scene = drawn.unwrap_or_default();
     let level = |item: &Item, width: f64| match item {
-        Item::Path { points, stroke: Some(stroke), closed: false, .. } if stroke.width == width => {
+        Item::Path { points, stroke: Some(stroke), closed: false, .. } if (stroke.width - width).abs() < 1e-9 => {
             Some(points.iter().map(|p| p[1]).fold(f64::NEG_INFINITY, f64::max))
         }
         _ => None,

@@ -62,6 +62,7 @@ pub(super) fn draw(canvas: &mut Canvas, view: &View<'_>, stack: &mut Stack, at: 
         format!("{}{plan}", quantity(&view.model.display, Measure::LineLoad, w.abs(), 4))
     };
     let feet = [view.on(member, part[0], 0.0), view.on(member, part[1], 0.0)];
+    let even = (start - end).abs() <= 1e-12 * largest;
     let lies_along = (pointing[0] * axis[0] + pointing[1] * axis[1]).abs() > 0.98;
     if lies_along {
         let base = stack.raise(at, normal, part, 1.6) + 0.9;
@@ -72,7 +73,7 @@ pub(super) fn draw(canvas: &mut Canvas, view: &View<'_>, stack: &mut Stack, at: 
             canvas.arrow(along(middle, pointing, -2.2), along(middle, pointing, 2.2), ink(0.2), Clear::Hard);
         }
         let anchor = along(view.on(member, (part[0] + part[1]) / 2.0, 0.0), normal, base);
-        let said = if start == end { words(*start) } else { format!("{} to {}", words(*start), words(*end)) };
+        let said = if even { words(*start) } else { format!("{} to {}", words(*start), words(*end)) };
         canvas.label(Wish { anchors: vec![anchor], toward: Some(normal), gap: 1.2 }, Style::Regular, said);
         return;
     }
@@ -108,7 +109,7 @@ pub(super) fn draw(canvas: &mut Canvas, view: &View<'_>, stack: &mut Stack, at: 
     }
     let middle: [f64; 2] = std::array::from_fn(|i| (tops[0][i] + tops[1][i]) / 2.0);
     let between = |t: f64| -> [f64; 2] { std::array::from_fn(|i| tops[0][i] + t * (tops[1][i] - tops[0][i])) };
-    if start == end {
+    if even {
         let anchors = vec![middle, between(0.3), between(0.7)];
         canvas.label(Wish { anchors, toward: Some(back), gap: 0.6 }, Style::Regular, words(*start));
     } else {
