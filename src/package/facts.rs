@@ -60,8 +60,9 @@ pub fn facts(
         load_audit: model
             .combinations
             .iter()
-            .map(|c| Group {
-                title: String::new(),
+            .zip(&solution.combinations)
+            .map(|(c, solved)| Group {
+                text: trust(solution, solved, &c.name),
                 tables: tables(sheet, &[&format!("{}.A", c.name)]),
                 ..Group::default()
             })
@@ -393,6 +394,18 @@ fn member_sheets(model: &Model, results: &Results, sheet: &Sheet, steps: &Index)
         });
     }
     sheets
+}
+
+/// How far the numbers of a combination can be trusted, in whole powers of ten: dust in the last digits moves no text.
+fn trust(solution: &Solution, solved: &crate::analysis::CombinationSolution, name: &str) -> String {
+    let power = |value: f64| value.max(1e-16).log10().ceil() as i32;
+    format!(
+        "Combination {name} was solved from {} equations. The forces left over in them are below 10{} of the largest force; of about 16 digits that the program works with, some {} are lost to the spread of the stiffnesses (condition number about 10{}).",
+        solution.equations,
+        crate::formula::superscript_number(power(solved.residual)),
+        power(solution.condition.max(1.0)),
+        crate::formula::superscript_number(power(solution.condition.max(1.0))),
+    )
 }
 
 /// Why a member is worked line by line under a combination; completes "this combination …".

@@ -1,6 +1,6 @@
 //! Orders of magnitude from simple spans.
 use crate::catalogue::load::Local;
-use crate::catalogue::symbol::L;
+use crate::catalogue::symbol::{L, MF1, MF2};
 use crate::formula::{Definition, Scope, Symbol, Tree, Value, Worksheet, source};
 use crate::model::{Combination, Member};
 use crate::units::Measure;
@@ -87,6 +87,16 @@ pub fn work_bound(
         scope.sheet().remark(
             None,
             Some("Below 0.5: the ends take most of the load's moment, or loads of both senses stand on the member."),
+        );
+    }
+    if scope.get(&MF1).is_some_and(|m| m.si != 0.0) && scope.get(&MF2).is_some() {
+        let fixed = Tree::Max(vec![MF1.tree().absolute(), MF2.tree().absolute()]);
+        let title = "Largest moment over the larger fixed-end moment of the loads, w·L²/12 where one uniform load acts";
+        let tree = Symbol::new("M_max").tree().absolute() / fixed;
+        scope.work(
+            'X',
+            63,
+            &Definition::new(Symbol::new("ρ_F"), title, Measure::Number, tree).from(&source::FIXED_END),
         );
     }
 }
