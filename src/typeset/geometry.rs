@@ -46,9 +46,9 @@ impl Geometry {
         Self {
             width,
             height,
-            left: 50.0,
-            text: 122.0,
-            right: check - 16.0,
+            left: 48.0,
+            text: 124.0,
+            right: check - 14.0,
             check,
             edge,
             head: 30.0,

@@ -85,13 +85,18 @@ pub fn typeset(document: &Document, sheet: &Sheet, paper: Paper, fonts: &Fonts) 
     let mut setter = Setter::new(fonts);
     let mut flow = Flow::new(geometry);
     let column = Column { left: geometry.text, geometry: &geometry, sheet, document };
-    for block in &document.blocks {
+    for (at, block) in document.blocks.iter().enumerate() {
         if matches!(block, Block::NewSheet) {
             flow.new_sheet();
         }
-        for slab in block::set(block, column, &mut setter) {
-            flow.push(slab);
+        let mut slabs = block::set(block, column, &mut setter);
+        if introduces(&document.blocks, at)
+            && slabs.len() <= INTRODUCTION
+            && let Some(last) = slabs.last_mut()
+        {
+            last.keep = true;
         }
+        slabs.into_iter().for_each(|slab| flow.push(slab));
     }
     flow.settle();
     let mut sheets = flow.sheets;
@@ -111,6 +116,19 @@ pub fn typeset(document: &Document, sheet: &Sheet, paper: Paper, fonts: &Fonts) 
     pages.outline = outline(document, &pages);
     pages.missing = setter.missing;
     pages
+}
+
+/// Lines of a paragraph that stays with what it introduces.
+const INTRODUCTION: usize = 3;
+
+/// Whether a paragraph stands between a heading and what it introduces.
+fn introduces(blocks: &[Block], at: usize) -> bool {
+    let set_apart = |block: &Block| {
+        matches!(block, Block::Step(_) | Block::Table(_) | Block::Figure(_) | Block::Grid { .. } | Block::List { .. })
+    };
+    matches!(blocks[at], Block::Paragraph(_))
+        && at.checked_sub(1).is_some_and(|before| matches!(blocks[before], Block::Heading { .. }))
+        && blocks.get(at + 1).is_some_and(set_apart)
 }
 
 fn collect_places(sheets: &[Frame], places: &mut BTreeMap<Box<str>, Spot>) {

@@ -24,6 +24,8 @@ const LABEL: f32 = 22.0;
 const FINE_LEADING: f32 = 1.42;
 /// Room that `by` takes beside the addresses, with the space before it.
 const BESIDE: f32 = 30.0;
+/// A number is not set smaller than this part of its size to fit its column.
+const NUMBER_LEAST: f32 = 0.8;
 /// Space below a step.
 const BELOW: f32 = 13.0;
 
@@ -62,23 +64,8 @@ impl StepPage<'_, '_> {
     }
 
     fn title(&mut self, step: &Step) {
-        let g = self.geometry;
-        let mut frame = Frame::default();
-        let number = Type::new(FaceName::Bold, SMALL);
-        let width = self.setter.set(&mut frame, &step.number, number, g.left, BASELINE);
-        tick(&mut frame, g, BASELINE);
-        if width > g.text - g.left - 10.0 {
-            self.push(frame, LEADING, 0.0);
-            frame = Frame::default();
-        }
         let title = Paragraph::plain(step.definition.title(), body_type());
-        for line in title.lines(self.setter, g.right - g.text) {
-            title.set(self.setter, &mut frame, line, g.text, BASELINE);
-            self.push(std::mem::take(&mut frame), LEADING, 0.0);
-        }
-        if !frame.items.is_empty() {
-            self.push(frame, LEADING, 0.0);
-        }
+        self.slabs.extend(numbered(&step.number, &title, self.setter, self.geometry));
     }
 
     fn formula(&mut self, step: &Step) {
@@ -294,8 +281,38 @@ fn by(step: &Step) -> Option<String> {
     (!by.is_empty()).then(|| by.join("; "))
 }
 
+/// A number where the eye starts, the words beside it, a square to tick: the first lines of a step or a table.
+///
+/// A number too long for its column is set smaller, and above the words where even that is too long.
+pub(super) fn numbered(number: &str, words: &Paragraph, setter: &mut Setter<'_>, g: &Geometry) -> Vec<Slab> {
+    let mut slabs = Vec::new();
+    let mut frame = Frame::default();
+    let room = g.text - g.left - 8.0;
+    let mut kind = Type::new(FaceName::Bold, SMALL);
+    let scale = room / setter.width(number, kind).max(1.0);
+    let beside = scale >= NUMBER_LEAST;
+    if beside {
+        kind.size *= scale.min(1.0);
+    } else {
+        kind.size *= ((g.right - g.left) / room * scale).min(1.0);
+    }
+    setter.set(&mut frame, number, kind, g.left, BASELINE);
+    tick(&mut frame, g, BASELINE);
+    if !beside {
+        slabs.push(Slab { frame: std::mem::take(&mut frame), height: LEADING, ..Slab::default() });
+    }
+    for line in words.lines(setter, g.right - g.text) {
+        words.set(setter, &mut frame, line, g.text, BASELINE);
+        slabs.push(Slab { frame: std::mem::take(&mut frame), height: LEADING, ..Slab::default() });
+    }
+    if !frame.items.is_empty() {
+        slabs.push(Slab { frame, height: LEADING, ..Slab::default() });
+    }
+    slabs
+}
+
 /// A square to tick and a line for initials, in the checker's column.
-pub(super) fn tick(frame: &mut Frame, geometry: &Geometry, baseline: f32) {
+fn tick(frame: &mut Frame, geometry: &Geometry, baseline: f32) {
     frame.outline(geometry.check + 8.0, baseline - 7.4, 8.0, 8.0, 0.5);
     let line = vec![[geometry.check + 21.0, baseline + 0.6], [geometry.edge, baseline + 0.6]];
     let stroke = Some((0.4, &[0.4_f32, 1.6] as &[f32], 0));

@@ -286,6 +286,7 @@ fn long_names_and_wide_tables_stay_within_the_measure() {
         Block::Verbatim(format!("{}\n\n{}", "日本語 ".repeat(80), "w ".repeat(300))),
         Block::Grid { head: vec![], rows: vec![] },
         Block::Grid { head: vec![words.clone(), words.clone()], rows: vec![vec![words.clone()], vec![]] },
+        Block::Grid { head: vec![words.clone()], rows: vec![vec![vec![Inline::Text("many words ".repeat(2000))]]] },
         Block::Paragraph(vec![]),
         Block::List { ordered: false, items: vec![] },
         Block::Figure("none".into()),

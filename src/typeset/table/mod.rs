@@ -9,10 +9,10 @@ use columns::{Layout, fit};
 use super::FaceName;
 use super::block::{Column, space};
 use super::flow::Slab;
-use super::frame::{Anchor, Frame};
-use super::geometry::{BASELINE, FINE, LEADING, SMALL};
+use super::frame::Anchor;
+use super::geometry::{FINE, SMALL};
 use super::paragraph::Paragraph;
-use super::step::{labelled, tick};
+use super::step::{labelled, numbered};
 use super::text::{Setter, Type};
 use crate::document::Inline;
 use crate::sheet::Table;
@@ -48,22 +48,11 @@ pub(super) fn of_sheet(table: &Table, column: Column<'_>, setter: &mut Setter<'_
         anchors: table.rows.iter().map(|row| Some(format!("{}.{}", table.id, row.name))).collect(),
         open: false,
     };
-    let mut slabs = Vec::new();
-    let mut frame = Frame::default();
-    frame.anchors.push(Anchor { name: table.id.as_str().into(), y: 0.0 });
-    let bold = Type::new(FaceName::Bold, SMALL);
-    let width = setter.set(&mut frame, &table.id, bold, g.left, BASELINE);
-    tick(&mut frame, g, BASELINE);
-    if width > g.text - g.left - 10.0 {
-        slabs.push(Slab { frame: std::mem::take(&mut frame), height: LEADING, keep: true, ..Slab::default() });
-    }
     let title = Paragraph::plain(&table.title, Type::new(FaceName::Regular, SMALL + 1.0));
-    for line in title.lines(setter, g.right - g.text) {
-        title.set(setter, &mut frame, line, g.text, BASELINE);
-        slabs.push(Slab { frame: std::mem::take(&mut frame), height: LEADING, keep: true, ..Slab::default() });
-    }
-    if !frame.items.is_empty() {
-        slabs.push(Slab { frame, height: LEADING, keep: true, ..Slab::default() });
+    let mut slabs = numbered(&table.id, &title, setter, g);
+    slabs.iter_mut().for_each(|slab| slab.keep = true);
+    if let Some(first) = slabs.first_mut() {
+        first.frame.anchors.push(Anchor { name: table.id.as_str().into(), y: 0.0 });
     }
     if let Some(last) = slabs.last_mut() {
         last.after = 3.0;

@@ -12,6 +12,8 @@ use std::rc::Rc;
 /// Distance from row to row over the size of type, and of rows left open for writing.
 const LEADING: f32 = 1.46;
 const OPEN: f32 = 2.6;
+/// A row of more lines than this is not kept in one piece.
+const MANY: usize = 24;
 /// A table of less than this part of a sheet's height is not parted.
 const WHOLE: f32 = 0.3;
 /// A little space after so many rows guides the eye along long tables.
@@ -26,10 +28,16 @@ pub(super) fn set(content: &Content2D, layout: &Layout, left: f32, setter: &mut 
     if let Some(id) = &content.id {
         head = continued(id, head, setter, g);
     }
-    let head = Rc::new(head);
+    // A head that would fill the next sheet is not repeated.
+    let repeated = (head.height < WHOLE * g.body()).then(|| Rc::new(head));
     for at in 0..count {
-        let mut slab = row(content, at, layout, left, setter);
-        slab.head = Some(Rc::clone(&head));
+        let mut lines = row(content, at, layout, left, setter);
+        let Some(mut slab) = lines.pop() else { continue };
+        for mut line in lines {
+            line.head = repeated.clone();
+            slabs.push(line);
+        }
+        slab.head = repeated.clone();
         // A single last row does not stand alone on the next sheet.
         slab.keep = at + 1 < count && (at == 0 || at + 2 == count);
         if content.open && at + 1 < count {
@@ -111,40 +119,44 @@ fn numeric(content: &Content2D, index: usize) -> bool {
     content.rows.iter().any(|row| matches!(row.get(index), Some(Content::Number(..))))
 }
 
-fn row(content: &Content2D, at: usize, layout: &Layout, left: f32, setter: &mut Setter<'_>) -> Slab {
+/// A row as one strip; one of very many lines as a strip a line, so that it can go on over the next sheet.
+fn row(content: &Content2D, at: usize, layout: &Layout, left: f32, setter: &mut Setter<'_>) -> Vec<Slab> {
     let size = SMALL * layout.scale;
-    let leading = size * LEADING;
-    let mut frame = Frame::default();
+    let leading = size * 1.25;
+    let mut lines = vec![Frame::default()];
     if let Some(name) = &content.anchors[at] {
-        frame.anchors.push(Anchor { name: name.as_str().into(), y: 0.0 });
+        lines[0].anchors.push(Anchor { name: name.as_str().into(), y: 0.0 });
     }
-    let mut lines = 1;
     let mut x = left;
     for column in &layout.columns {
         match content.rows[at].get(column.index) {
             Some(Content::Words(words)) => {
                 let words = words.scaled(layout.scale);
-                let set = words.lines(setter, column.width + 0.02);
-                lines = lines.max(set.len());
-                for (line_at, line) in set.into_iter().enumerate() {
-                    let y = size * 1.04 + size * 1.25 * line_at as f32;
-                    words.set(setter, &mut frame, line, x, y);
+                for (line_at, line) in words.lines(setter, column.width + 0.02).into_iter().enumerate() {
+                    if lines.len() <= line_at {
+                        lines.push(Frame::default());
+                    }
+                    words.set(setter, &mut lines[line_at], line, x, size * 1.04);
                 }
             }
-            Some(Content::Number(text, split)) => number(text, *split, *column, layout.scale, x, setter, &mut frame),
+            Some(Content::Number(text, split)) => {
+                number(text, *split, *column, layout.scale, x, setter, &mut lines[0]);
+            }
             _ => {}
         }
         x += column.width + layout.gap;
     }
-    let height = leading + size * 1.25 * (lines - 1) as f32;
-    if content.open {
-        // Words stand low, on the line that is left to write on.
-        let spare = (size * OPEN - height).max(size * 0.5);
-        frame.shift(0, 0.0, spare);
-        frame.links.iter_mut().for_each(|link| link.y += spare);
-        return Slab { frame, height: height + spare, ..Slab::default() };
+    if lines.len() > MANY {
+        return lines.into_iter().map(|frame| Slab { frame, height: leading, ..Slab::default() }).collect();
     }
-    Slab { frame, height, ..Slab::default() }
+    let height = size * LEADING + leading * (lines.len() - 1) as f32;
+    // Where cells are left open, words stand low, on the line that is left to write on.
+    let above = if content.open { (size * OPEN - height).max(size * 0.5) } else { 0.0 };
+    let mut frame = Frame::default();
+    for (line_at, line) in lines.into_iter().enumerate() {
+        frame.append(line, 0.0, above + leading * line_at as f32);
+    }
+    vec![Slab { frame, height: height + above, ..Slab::default() }]
 }
 
 fn number(text: &str, split: usize, column: Placed, scale: f32, x: f32, setter: &mut Setter<'_>, frame: &mut Frame) {
