@@ -12,6 +12,7 @@ mod head;
 mod maths;
 mod paragraph;
 mod step;
+mod symbols;
 mod table;
 mod text;
 

@@ -1,8 +1,10 @@
 //! Running text: inline styles, line breaking over the whole paragraph, links.
 use super::frame::{Frame, Link};
+use super::maths::Maths;
 use super::text::{Setter, Type};
-use super::{FaceName, geometry};
+use super::{FaceName, geometry, symbols};
 use crate::document::Inline;
+use crate::formula::Symbol;
 use std::borrow::Cow;
 
 /// A paragraph with its styles, ready to be measured and broken.
@@ -18,6 +20,8 @@ struct Span {
     end: usize,
     kind: Type,
     link: Option<usize>,
+    /// Whether it is a symbol of a formula.
+    symbol: bool,
 }
 
 /// A word or a part of one: bytes of the text, its width, the space that follows it on the same line.
@@ -105,6 +109,20 @@ impl Paragraph {
 
     /// Adds words; white space of any length becomes one space.
     fn push(&mut self, text: &str, kind: Type, link: Option<usize>) {
+        let mut from = 0;
+        // Symbols are set as in formulas, but not where text is bold or as typed.
+        if matches!(kind.face, FaceName::Regular | FaceName::Italic) && link.is_none() {
+            for symbol in symbols::within(text) {
+                self.push_words(&text[from..symbol.start], kind, link);
+                self.text.push_str(&text[symbol.clone()]);
+                self.spans.push(Span { end: self.text.len(), kind, link, symbol: true });
+                from = symbol.end;
+            }
+        }
+        self.push_words(&text[from..], kind, link);
+    }
+
+    fn push_words(&mut self, text: &str, kind: Type, link: Option<usize>) {
         for character in text.chars() {
             let white = character.is_whitespace() && !matches!(character, '\u{a0}' | '\u{202f}' | '\u{2007}');
             if !white {
@@ -113,7 +131,7 @@ impl Paragraph {
                 self.text.push(' ');
             }
         }
-        self.spans.push(Span { end: self.text.len(), kind, link });
+        self.spans.push(Span { end: self.text.len(), kind, link, symbol: false });
     }
 
     /// The parts of a stretch of text that share a style.
@@ -132,7 +150,7 @@ impl Paragraph {
     }
 
     fn measure(&self, setter: &Setter<'_>, start: usize, end: usize) -> f32 {
-        self.pieces(start, end).map(|(text, span)| setter.width(text, span.kind)).sum()
+        self.pieces(start, end).map(|(text, span)| width_of(setter, text, span)).sum()
     }
 
     /// Width on one line, and the width of the longest word.
@@ -252,7 +270,11 @@ impl Paragraph {
     pub(super) fn set(&self, setter: &mut Setter<'_>, frame: &mut Frame, line: TextLine, x: f32, y: f32) {
         let mut at = x;
         for (text, span) in self.pieces(line.start, line.end) {
-            let width = setter.set(frame, text, span.kind, at, y);
+            let width = if span.symbol {
+                set_symbol(setter, frame, text, span, at, y)
+            } else {
+                setter.set(frame, text, span.kind, at, y)
+            };
             if let Some(to) = span.link.and_then(|link| self.links.get(link)) {
                 let height = span.kind.size * 1.1;
                 frame.links.push(Link { x: at, y: y - span.kind.size * 0.82, width, height, to: to.clone() });
@@ -260,6 +282,24 @@ impl Paragraph {
             at += width;
         }
     }
+}
+
+fn width_of(setter: &Setter<'_>, text: &str, span: Span) -> f32 {
+    if span.symbol {
+        set_symbol(&mut Setter::new(setter.fonts), &mut Frame::default(), text, span, 0.0, 0.0)
+    } else {
+        setter.width(text, span.kind)
+    }
+}
+
+fn set_symbol(setter: &mut Setter<'_>, frame: &mut Frame, text: &str, span: Span, x: f32, y: f32) -> f32 {
+    let from = frame.items.len();
+    frame.speak(text);
+    let symbol = Symbol::owned(text.to_string());
+    let width = Maths { setter, frame }.symbol(&symbol, None, span.kind.size).width;
+    frame.end_speech();
+    frame.shift(from, x, y);
+    width
 }
 
 /// Running text.

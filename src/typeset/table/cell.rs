@@ -7,6 +7,7 @@ use crate::typeset::frame::Frame;
 use crate::typeset::geometry::SMALL;
 use crate::typeset::maths::Maths;
 use crate::typeset::paragraph::Paragraph;
+use crate::typeset::symbols::is_stem;
 use crate::typeset::text::{Setter, Type};
 
 /// Regular and bold text of a table at its full size.
@@ -73,16 +74,8 @@ impl Head {
 
     pub(super) fn of(column: &Column) -> Self {
         let symbol = Symbol::owned(column.symbol.clone());
-        let mut stem = symbol.stem().chars();
-        let is_symbol = match (stem.next(), stem.next(), stem.next()) {
-            (Some(letter), None, _) => letter.is_alphabetic(),
-            // Two letters are a symbol where the first is a capital or Greek (`Fx`, `Δx`), else a word (`to`, `in`).
-            (Some(first), Some(second), None) => {
-                second.is_alphabetic() && (first.is_uppercase() || ('α'..='ω').contains(&first))
-            }
-            _ => false,
-        };
-        if is_symbol {
+        // Headings of more letters than a symbol has are words.
+        if is_stem(symbol.stem()) {
             let unit = column.unit.as_ref().map_or(String::new(), |unit| unit.text.to_string());
             Self::Symbol(symbol, unit)
         } else {
