@@ -22,15 +22,24 @@ pub(super) struct Fault {
 /// # Errors
 /// A file cannot be written (no permission, no room): nothing has been replaced then.
 pub(super) fn write_all(outputs: &[Output]) -> Result<(), Fault> {
-    let mut written: Vec<PathBuf> = Vec::new();
-    for output in outputs {
-        let aside = aside(&output.path);
-        if let Err(error) = write_one(&aside, &output.bytes) {
-            written.push(aside);
+    let written: Vec<PathBuf> = outputs.iter().map(|output| aside(&output.path)).collect();
+    // Waiting for the disk is the slow part: every file waits at the same time.
+    let results: Vec<io::Result<()>> = std::thread::scope(|scope| {
+        let waiting: Vec<_> = outputs
+            .iter()
+            .zip(&written)
+            .map(|(output, aside)| scope.spawn(move || write_one(aside, &output.bytes)))
+            .collect();
+        waiting
+            .into_iter()
+            .map(|handle| handle.join().unwrap_or_else(|_| Err(io::Error::other("the writer stopped"))))
+            .collect()
+    });
+    for (output, result) in outputs.iter().zip(results) {
+        if let Err(error) = result {
             written.iter().for_each(|path| drop(fs::remove_file(path)));
             return Err(Fault { path: output.path.clone(), error });
         }
-        written.push(aside);
     }
     for (output, aside) in outputs.iter().zip(&written) {
         if let Err(error) = fs::rename(aside, &output.path) {

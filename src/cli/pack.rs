@@ -71,19 +71,18 @@ impl Pack {
         let name = input.file_name().map_or_else(|| "input.yaml".into(), |name| name.to_string_lossy().into_owned());
         let stem = input.file_stem().map_or_else(|| "input".into(), |stem| stem.to_string_lossy().into_owned());
         let stem = if self.blind { format!("{stem}.brief") } else { stem };
-        let made =
-            if self.blind { solved.brief(&name, &text, templates) } else { solved.package(&name, &text, templates) };
-        let package = match made {
-            Ok(package) => package,
+        let made = if self.blind {
+            solved.brief(&name, &text, templates).map_err(|fault| fault.to_string()).and_then(|brief| {
+                let pdf = solved.pdf(&brief, fonts)?;
+                Ok((brief, pdf))
+            })
+        } else {
+            solved.package_and_pdf(&name, &text, templates, fonts)
+        };
+        let (package, pdf) = match made {
+            Ok(made) => made,
             Err(fault) => {
                 warn(&format!("error: {fault}"));
-                return Outcome::Failed;
-            }
-        };
-        let pdf = match solved.pdf(&package, fonts) {
-            Ok(pdf) => pdf,
-            Err(fault) => {
-                warn(&format!("error: the PDF cannot be written: {fault}"));
                 return Outcome::Failed;
             }
         };

@@ -83,6 +83,8 @@ pub struct Package {
     pub sheet: Sheet,
     /// The document.
     pub document: Document,
+    /// Name without ending, under which its files stand.
+    pub stem: String,
     /// Markdown.
     pub markdown: String,
     /// Results file.
@@ -91,6 +93,20 @@ pub struct Package {
     pub figures: Vec<(String, String)>,
     /// Open points, such as a check beyond its limit: how many.
     pub beyond: usize,
+}
+
+impl Package {
+    /// Markdown, results file and drawings.
+    fn texts(&self, solved: &Solved) -> (String, String, Vec<(String, String)>) {
+        let markdown = write::markdown::write(&self.document, &self.sheet, &self.stem);
+        let figures =
+            self.sheet.figures.iter().map(|figure: &Figure| (figure.id.clone(), write::svg::write(figure))).collect();
+        (markdown, solved.json(), figures)
+    }
+
+    fn write_texts(&mut self, solved: &Solved) {
+        (self.markdown, self.results, self.figures) = self.texts(solved);
+    }
 }
 
 impl Solved {
@@ -111,18 +127,51 @@ impl Solved {
     /// # Errors
     /// A template is at fault.
     pub fn package(&self, name: &str, text: &str, templates: &Templates) -> Result<Package, document::TemplateFault> {
+        let mut package = self.document(name, text, templates)?;
+        package.write_texts(self);
+        Ok(package)
+    }
+
+    /// The package with its PDF; both are made at the same time.
+    ///
+    /// # Errors
+    /// A template or a font is at fault, as text.
+    pub fn package_and_pdf(
+        &self,
+        name: &str,
+        text: &str,
+        templates: &Templates,
+        fonts: &Fonts,
+    ) -> Result<(Package, Vec<u8>), String> {
+        let package = self.document(name, text, templates).map_err(|fault| fault.to_string())?;
+        let (texts, pdf) = std::thread::scope(|scope| {
+            let pdf = scope.spawn(|| self.pdf(&package, fonts));
+            let texts = package.texts(self);
+            (texts, pdf.join().unwrap_or_else(|_| Err("the page writer stopped".into())))
+        });
+        let (markdown, results, figures) = texts;
+        Ok((Package { markdown, results, figures, ..package }, pdf?))
+    }
+
+    /// Sheet and document of a package, nothing written yet.
+    fn document(&self, name: &str, text: &str, templates: &Templates) -> Result<Package, document::TemplateFault> {
         let mut sheet = sheet::compose(&self.model, &self.solution, &self.results);
         sheet.figures = figures::draw(&self.model, &self.solution, &self.results);
         let origin = Origin { name, text, sha256: &self.sha256 };
         let cautions = failure::cautions(&self.model, &self.solution);
         let facts = facts(&self.model, &self.solution, &self.results, &sheet, cautions, origin);
         let document = document::build(&facts, templates)?;
-        let stem = name.strip_suffix(".yaml").or_else(|| name.strip_suffix(".yml")).unwrap_or(name);
-        let markdown = write::markdown::write(&document, &sheet, stem);
-        let figures =
-            sheet.figures.iter().map(|figure: &Figure| (figure.id.clone(), write::svg::write(figure))).collect();
+        let stem = name.strip_suffix(".yaml").or_else(|| name.strip_suffix(".yml")).unwrap_or(name).to_owned();
         let beyond = facts.checks.beyond;
-        Ok(Package { sheet, document, markdown, results: self.json(), figures, beyond })
+        Ok(Package {
+            sheet,
+            document,
+            stem,
+            markdown: String::new(),
+            results: String::new(),
+            figures: Vec::new(),
+            beyond,
+        })
     }
 
     /// The brief without results, for a checker who works independently first.
@@ -139,10 +188,19 @@ impl Solved {
         let facts = facts::brief(&self.model, &sheet, origin);
         let document = document::build(&facts, &templates.with_order("order-brief"))?;
         let stem = name.strip_suffix(".yaml").or_else(|| name.strip_suffix(".yml")).unwrap_or(name);
-        let markdown = write::markdown::write(&document, &sheet, &format!("{stem}.brief"));
-        let figures =
-            sheet.figures.iter().map(|figure: &Figure| (figure.id.clone(), write::svg::write(figure))).collect();
-        Ok(Package { sheet, document, markdown, results: String::new(), figures, beyond: 0 })
+        let stem = format!("{stem}.brief");
+        let mut package = Package {
+            sheet,
+            document,
+            stem,
+            markdown: String::new(),
+            results: String::new(),
+            figures: Vec::new(),
+            beyond: 0,
+        };
+        package.write_texts(self);
+        package.results.clear();
+        Ok(package)
     }
 
     /// The PDF of a package.

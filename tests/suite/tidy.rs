@@ -49,6 +49,7 @@ const CRATES: &[(&str, &[&str])] = &[
     ("pulldown_cmark", &["document"]),
     ("printpdf", &["write"]),
     ("lopdf", &["write"]),
+    ("flate2", &["write"]),
     ("subsetter", &["typeset", "write"]),
     ("ttf_parser", &["typeset", "write"]),
     ("serde_json", &["write"]),
