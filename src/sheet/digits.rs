@@ -31,8 +31,9 @@ pub fn settle(sheet: &mut Sheet, digits: u8) {
     let digits = i32::from(digits);
     let owed: Vec<i32> = sheet.ledger.entries().iter().map(|entry| owed_place(entry, digits)).collect();
     let mut finer: Vec<i32> = vec![0; sheet.steps.len()];
+    let gradients: Vec<Vec<f64>> = sheet.steps.iter().map(|step| gradient(step, &sheet.ledger)).collect();
     for _ in 0..8 {
-        let place = places(sheet, &owed, &finer);
+        let place = places(sheet, &owed, &finer, &gradients);
         print(sheet, &owed, &place);
         let mut settled = true;
         for (at, step) in sheet.steps.iter().enumerate() {
@@ -51,16 +52,20 @@ pub fn settle(sheet: &mut Sheet, digits: u8) {
     }
 }
 
+/// Derivatives of a step's formula by its operands, at their values.
+fn gradient(step: &Step, ledger: &Ledger) -> Vec<f64> {
+    let values: Vec<f64> = step.operands.iter().map(|(_, id)| ledger.entry(*id).value).collect();
+    step.definition.program().gradient(&values).1
+}
+
 /// The last place of every entry: its own, or a tenth of what its strictest user can bear.
-fn places(sheet: &Sheet, owed: &[i32], finer: &[i32]) -> Vec<i32> {
+fn places(sheet: &Sheet, owed: &[i32], finer: &[i32], gradients: &[Vec<f64>]) -> Vec<i32> {
     let entries = sheet.ledger.entries();
     let mut place = owed.to_vec();
     let mut bearable: Vec<f64> =
         owed.iter().zip(entries).map(|(place, entry)| 10f64.powi(*place) * entry.unit.scale).collect();
     for (at, step) in sheet.steps.iter().enumerate().rev() {
-        let values: Vec<f64> = step.operands.iter().map(|(_, id)| entries[*id as usize].value).collect();
-        let gradient = step.definition.program().gradient(&values).1;
-        for ((_, id), slope) in step.operands.iter().zip(gradient) {
+        for ((_, id), slope) in step.operands.iter().zip(gradients[at].iter().copied()) {
             let id = *id as usize;
             let entry = &entries[id];
             if slope == 0.0 || matches!(entry.rule, Rule::Typed | Rule::Shared) {

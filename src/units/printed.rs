@@ -32,7 +32,18 @@ impl Printed {
     /// The printed number as a value.
     #[must_use]
     pub fn value(self) -> f64 {
-        format!("{}e{}", self.count, self.place).parse().unwrap_or(0.0)
+        // Whole counts and powers of ten up to 22 are exact, so one division or product rounds once, as reading
+        // the decimal text would.
+        match POWERS.get(self.place.unsigned_abs() as usize) {
+            Some(power) if self.count.unsigned_abs() < 1 << 53 => {
+                if self.place < 0 {
+                    self.count as f64 / power
+                } else {
+                    self.count as f64 * power
+                }
+            }
+            _ => format!("{}e{}", self.count, self.place).parse().unwrap_or(0.0),
+        }
     }
 
     /// One unit of the last printed place.
@@ -74,8 +85,18 @@ impl Printed {
     }
 }
 
+/// Powers of ten that a double holds exactly.
+const POWERS: [f64; 23] = [
+    1e0, 1e1, 1e2, 1e3, 1e4, 1e5, 1e6, 1e7, 1e8, 1e9, 1e10, 1e11, 1e12, 1e13, 1e14, 1e15, 1e16, 1e17, 1e18, 1e19, 1e20,
+    1e21, 1e22,
+];
+
 fn power_of_ten(exponent: i32) -> f64 {
-    format!("1e{exponent}").parse().unwrap_or(0.0)
+    match POWERS.get(exponent.unsigned_abs() as usize) {
+        Some(power) if exponent < 0 => 1.0 / power,
+        Some(power) => *power,
+        None => format!("1e{exponent}").parse().unwrap_or(0.0),
+    }
 }
 
 fn scaled(value: f64, place: i32) -> f64 {
