@@ -4,6 +4,9 @@ use super::row::{DOT_GAP, signed};
 use super::{Box2, Filling, Maths, Place, needs_brackets};
 use crate::formula::Tree;
 
+/// Sizes tried before a bracket is broken.
+const SMALLER: [f32; 3] = [1.0, 0.92, 0.84];
+
 /// A line of a formula: the frame's items from `from` to `to`, its left end at x = 0, its baseline y = 0.
 #[derive(Debug, Clone, Copy)]
 pub(in crate::typeset) struct Line {
@@ -24,10 +27,27 @@ impl Maths<'_, '_> {
         width: f32,
         indent: f32,
     ) -> Vec<Line> {
-        let mut pieces = Vec::new();
-        let mut breaker = Breaker { maths: self, filling, size, rest: width - indent };
-        breaker.split(tree, Place::Alone, width, &mut pieces);
+        let (items, glyphs) = (self.frame.items.len(), self.frame.glyphs.len());
+        // Somewhat smaller type is easier to read than brackets that open on one line and close on the next.
+        for scale in SMALLER {
+            let (pieces, broken) = self.pieces(tree, filling, size * scale, width, indent);
+            if broken == 0 {
+                return self.fill(&pieces, width, indent);
+            }
+            self.frame.items.truncate(items);
+            self.frame.glyphs.truncate(glyphs);
+        }
+        let (pieces, _) = self.pieces(tree, filling, size, width, indent);
         self.fill(&pieces, width, indent)
+    }
+
+    /// Sets a formula in pieces that each fit a line; counts the brackets that are broken.
+    fn pieces(&mut self, tree: &Tree, filling: Filling<'_>, size: f32, width: f32, indent: f32) -> (Vec<Box2>, usize) {
+        let mut pieces = Vec::new();
+        let mut breaker = Breaker { maths: self, filling, size, rest: width - indent, broken: 0 };
+        breaker.split(tree, Place::Alone, width, &mut pieces);
+        let broken = breaker.broken;
+        (pieces, broken)
     }
 
     /// Puts pieces side by side on as few lines as hold them.
@@ -73,6 +93,7 @@ struct Breaker<'b, 'm, 'f, 'a> {
     filling: Filling<'a>,
     size: f32,
     rest: f32,
+    broken: usize,
 }
 
 impl Breaker<'_, '_, '_, '_> {
@@ -88,6 +109,7 @@ impl Breaker<'_, '_, '_, '_> {
         self.maths.frame.glyphs.truncate(glyphs);
         let first = out.len();
         if needs_brackets(tree, place) {
+            self.broken += 1;
             let opening = self.maths.text("(", self.size);
             self.parts(tree, out);
             self.before(opening, first, out);
@@ -127,6 +149,7 @@ impl Breaker<'_, '_, '_, '_> {
                 }
             }
             Tree::Quotient(above, below) => {
+                self.broken += 1;
                 self.split(above, Place::Factor, room, out);
                 self.after("/", 0.0, out);
                 self.split(below, Place::Base, room, out);
@@ -169,6 +192,7 @@ impl Breaker<'_, '_, '_, '_> {
     }
 
     fn listed(&mut self, opening: &str, parts: &[Tree], closing: &str, out: &mut Vec<Box2>) {
+        self.broken += 1;
         let first = out.len();
         let opening = self.maths.text(opening, self.size);
         for (at, part) in parts.iter().enumerate() {
