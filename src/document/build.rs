@@ -12,7 +12,7 @@ use minijinja::{AutoEscape, Environment, Error, ErrorKind, Output, State, Undefi
 ///
 /// In templates every value is escaped, so that text from the input stands as typed and on one line.
 /// `{{ text|prose }}` lets text from the input keep its paragraphs, lists and emphasis; `{{ number|link }}` prints
-/// the address of a step or a table as a link to it. [`super::marks`] lists the marks that stand for what is no text.
+/// the address of a step or a table as a link to it. The module `marks` lists the marks that stand for what is no text.
 ///
 /// # Errors
 /// A template that is missing, cannot be parsed, names a fact that does not exist, or prints what cannot be read.

@@ -27,13 +27,19 @@ fn median(mut run: impl FnMut()) -> f64 {
 fn main() {
     let folder = Path::new(env!("CARGO_MANIFEST_DIR")).join("demo-inputs");
     let out = Path::new(env!("CARGO_TARGET_TMPDIR")).join("bench");
-    println!("{:<22} {:>8} {:>9} {:>9} {:>9} {:>9}", "demo", "sheets", "solve ms", "text ms", "pdf ms", "process ms");
+    println!(
+        "{:<22} {:>8} {:>9} {:>9} {:>9} {:>9} {:>9}",
+        "demo", "sheets", "solve ms", "text ms", "set ms", "pdf ms", "process ms"
+    );
     let mut demos: Vec<_> = fs::read_dir(folder)
         .expect("demos")
         .map(|e| e.expect("entry").path())
         .filter(|p| p.extension().is_some_and(|e| e == "yaml"))
         .collect();
     demos.sort();
+    // `cargo bench --bench pack -- portal` runs the demos whose names hold that word.
+    let wanted: Vec<String> = std::env::args().skip(1).filter(|a| !a.starts_with('-')).collect();
+    demos.retain(|path| wanted.is_empty() || wanted.iter().any(|word| path.to_string_lossy().contains(word)));
     let (templates, fonts) = (Templates::built_in(), Fonts::built_in());
     for path in demos {
         let text = fs::read_to_string(&path).expect("demo");
@@ -43,6 +49,14 @@ fn main() {
         let solve = median(|| drop(black_box(package::solve(&text))));
         let write = median(|| drop(black_box(solved.package(&name, &text, &templates))));
         let pdf = median(|| drop(black_box(solved.pdf(&package, &fonts))));
+        let set = median(|| {
+            drop(black_box(calcsheaf::typeset::typeset(
+                &package.document,
+                &package.sheet,
+                solved.model.display.paper,
+                &fonts,
+            )));
+        });
         let process = median(|| {
             let status = Command::new(env!("CARGO_BIN_EXE_calcsheaf"))
                 .arg("pack")
@@ -58,7 +72,7 @@ fn main() {
             .sheets
             .len();
         println!(
-            "{:<22} {sheets:>8} {solve:>9.1} {write:>9.1} {pdf:>9.1} {process:>9.1}",
+            "{:<22} {sheets:>8} {solve:>9.1} {write:>9.1} {set:>9.1} {pdf:>9.1} {process:>9.1}",
             name.trim_end_matches(".yaml")
         );
     }

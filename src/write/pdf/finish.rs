@@ -1,6 +1,6 @@
 //! The last pass over the file: the streams put in their places, bookmarks, language, dates, identity.
-use super::{Facts, PdfFault};
-use crate::typeset::{Bookmark, Pages};
+use super::{Facts, PdfFault, tidy};
+use crate::typeset::{Bookmark, Frame, Pages};
 use flate2::Compression;
 use flate2::write::ZlibEncoder;
 use lopdf::{Dictionary, Document, Object, ObjectId, SaveOptions, Stream, StringFormat, dictionary};
@@ -19,10 +19,15 @@ pub(super) fn finish(
     let page_ids: Vec<ObjectId> = document.get_pages().into_values().collect();
     let mut identity = Sha256::new();
     let contents: Vec<Vec<u8>> = streams.collect();
-    for ((page, content), packed) in page_ids.iter().zip(&contents).zip(packed(&contents)) {
+    let filled = page_ids.iter().zip(&pages.sheets).zip(&contents).zip(packed(&contents));
+    for (((page, sheet), content), packed) in filled {
         identity.update(content);
         let page = document.get_dictionary_mut(*page).map_err(fault)?;
-        mark_links_printable(page);
+        page.remove(b"Annots");
+        let links = links(sheet, pages, &page_ids);
+        if !links.is_empty() {
+            page.set("Annots", links);
+        }
         let place = page.get(b"Contents").and_then(Object::as_reference).map_err(fault)?;
         let dictionary = dictionary! { "Filter" => Object::Name(b"FlateDecode".to_vec()) };
         document.set_object(place, Stream::new(dictionary, packed).with_compression(false));
@@ -75,15 +80,31 @@ fn packed(contents: &[Vec<u8>]) -> Vec<Vec<u8>> {
     })
 }
 
-/// Links that are part of the page rather than of the screen carry the print flag (ISO 32000-1, 12.5.3).
-fn mark_links_printable(page: &mut Dictionary) {
-    match page.get_mut(b"Annots").and_then(Object::as_array_mut) {
-        Ok(links) if links.is_empty() => {
-            page.remove(b"Annots");
-        }
-        Ok(links) => links.iter_mut().filter_map(|link| link.as_dict_mut().ok()).for_each(|link| link.set("F", 4)),
-        Err(_) => {}
-    }
+/// The links of a sheet: each leads a little above the place it names (ISO 32000-1, 12.5.6.5 and 12.3.2).
+///
+/// The print flag belongs to links that are part of the page rather than of the screen (12.5.3).
+fn links(sheet: &Frame, pages: &Pages, page_ids: &[ObjectId]) -> Vec<Object> {
+    let real = |length: f32| Object::Real(tidy(length));
+    sheet
+        .links
+        .iter()
+        .filter_map(|link| {
+            let spot = pages.spot(&link.to)?;
+            let page = page_ids.get(spot.sheet)?;
+            let bottom = pages.height - link.y - link.height;
+            let rectangle = vec![real(link.x), real(bottom), real(link.x + link.width), real(bottom + link.height)];
+            let place: Vec<Object> =
+                vec![(*page).into(), "XYZ".into(), Object::Null, real(pages.height - spot.y + 6.0), Object::Null];
+            Some(Object::Dictionary(dictionary! {
+                "Type" => "Annot",
+                "Subtype" => "Link",
+                "Rect" => rectangle,
+                "Border" => vec![0.into(), 0.into(), 0.into()],
+                "F" => 4,
+                "Dest" => place,
+            }))
+        })
+        .collect()
 }
 
 fn information(facts: &Facts) -> Dictionary {

@@ -4,12 +4,9 @@ mod face;
 mod finish;
 
 use crate::document::RunningHead;
-use crate::typeset::{Fonts, Frame, Pages};
+use crate::typeset::{Fonts, Pages};
 use face::EmbeddedFace;
-use printpdf::{
-    Actions, BorderArray, ColorArray, Destination, FontId, HighlightingMode, LinkAnnotation, Op, PdfDocument, PdfPage,
-    PdfSaveOptions, Pt, Rect,
-};
+use printpdf::{FontId, PdfDocument, PdfPage, PdfSaveOptions, Pt, Rect};
 use std::fmt;
 
 /// What the file says about itself.
@@ -75,7 +72,7 @@ pub fn write(pages: &Pages, fonts: &Fonts, facts: &Facts) -> Result<Vec<u8>, Pdf
         pdf.resources.fonts.map.insert(FontId(face.resource()), face.font());
         carriers.extend(face.carrier());
     }
-    pdf.pages = pages.sheets.iter().map(|sheet| page(pages, sheet)).collect();
+    pdf.pages = pages.sheets.iter().map(|_| page(pages)).collect();
     if let Some(first) = pdf.pages.first_mut() {
         // printpdf embeds what the pages show: these operations name every glyph in use, and the stream they
         // make is replaced with the others.
@@ -87,28 +84,9 @@ pub fn write(pages: &Pages, fonts: &Fonts, facts: &Facts) -> Result<Vec<u8>, Pdf
     finish::finish(document, streams, pages, facts)
 }
 
-/// An empty page with the links of a sheet.
-fn page(pages: &Pages, sheet: &Frame) -> PdfPage {
-    let links = sheet.links.iter().filter_map(|link| {
-        let spot = pages.spot(&link.to)?;
-        let rect = Rect::from_xywh(
-            Pt(tidy(link.x)),
-            Pt(tidy(pages.height - link.y - link.height)),
-            Pt(tidy(link.width)),
-            Pt(tidy(link.height)),
-        );
-        let top = Some(tidy(pages.height - spot.y + 6.0));
-        let destination = Destination::Xyz { page: spot.sheet + 1, left: None, top, zoom: None };
-        let link = LinkAnnotation::new(
-            rect,
-            Actions::go_to(destination),
-            Some(BorderArray::Solid([0.0; 3])),
-            Some(ColorArray::Transparent),
-            Some(HighlightingMode::Invert),
-        );
-        Some(Op::LinkAnnotation { link })
-    });
-    let mut page = PdfPage::new(printpdf::Mm(0.0), printpdf::Mm(0.0), links.collect());
+/// An empty page of the size of a sheet; its stream and links are put in at the end.
+fn page(pages: &Pages) -> PdfPage {
+    let mut page = PdfPage::new(printpdf::Mm(0.0), printpdf::Mm(0.0), Vec::new());
     let whole = Rect::from_xywh(Pt(0.0), Pt(0.0), Pt(tidy(pages.width)), Pt(tidy(pages.height)));
     (page.media_box, page.trim_box, page.crop_box) = (whole.clone(), whole.clone(), whole);
     page

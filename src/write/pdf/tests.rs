@@ -34,8 +34,8 @@ fn every_page_draws_and_every_link_leads_to_a_page() {
         let page = document.get_dictionary(*page).unwrap();
         let Ok(annotations) = page.get(b"Annots").and_then(Object::as_array) else { continue };
         for link in annotations {
-            let action = link.as_dict().unwrap().get(b"A").and_then(Object::as_dict).unwrap();
-            let to = action.get(b"D").and_then(Object::as_array).unwrap()[0].as_reference().unwrap();
+            let to =
+                link.as_dict().unwrap().get(b"Dest").and_then(Object::as_array).unwrap()[0].as_reference().unwrap();
             assert!(pages.contains(&to));
             links += 1;
         }
