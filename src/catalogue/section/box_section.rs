@@ -56,7 +56,7 @@ impl SectionKind for BoxSection {
                 faults.push(("inner_radius", "it must not be more than half the smaller inside width".into()));
             }
             if let (Some(outer), Some(inner)) = (given.get(&RO), given.get(&RI))
-                && outer - t > inner + t * (std::f64::consts::SQRT_2 - 1.0) / std::f64::consts::SQRT_2 * 10.0
+                && outer - inner >= t * std::f64::consts::SQRT_2 / (std::f64::consts::SQRT_2 - 1.0)
             {
                 faults.push((
                     "outer_radius",

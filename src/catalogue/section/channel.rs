@@ -61,23 +61,27 @@ impl SectionKind for Channel {
             with(H * TW.cubed() / 3 + 2 * (TF * (B.cubed() - TW.cubed())) / 3, 2 * (IR + AR * (TW + CR).squared()));
         let weak = about_back - AREA * ZC.squared();
         if given.turned {
-            let foot = with(TW.tree(), R.into());
-            let level = Tree::Max(vec![ZC.into(), foot]);
-            steps.push(step(
-                59,
-                YV,
-                "Level of the largest shear stress above the back of the web",
-                Measure::Length,
-                level,
-                &source::SHEAR_STRESS,
-            ));
+            let of = |symbol| given.get(&symbol).unwrap_or(0.0);
+            let (h, b, tw, tf, r) = (of(H), of(B), of(TW), of(TF), of(R));
+            let area = 2.0 * b * tf + (h - 2.0 * tf) * tw;
+            let centroid = (h * tw * tw / 2.0 + tf * (b * b - tw * tw)) / area;
+            let level = centroid.max(tw + r);
+            let in_flanges = (b - level) * (b + level - 2.0 * centroid) / 2.0;
+            let (moment, width) = if centroid < tw && centroid * centroid / 2.0 > in_flanges {
+                (H * ZC.squared() / 2, H.tree())
+            } else {
+                let level = Tree::Max(vec![ZC.into(), with(TW.tree(), R.into())]);
+                let title = "Level of the largest shear stress above the back of the web";
+                steps.push(step(59, YV, title, Measure::Length, level, &source::SHEAR_STRESS));
+                (TF * (B - YV.tree()) * (B + YV.tree() - 2 * ZC), 2 * TF)
+            };
             steps.extend(ends(Ends {
                 top: B - ZC.tree(),
                 bottom: ZC.into(),
                 inertia: weak,
                 minor_inertia: strong,
-                shear_moment: TF * (B - YV.tree()) * (B + YV.tree() - 2 * ZC),
-                shear_width: 2 * TF,
+                shear_moment: moment,
+                shear_width: width,
                 source: &source::PARALLEL_AXES,
             }));
         } else {

@@ -72,23 +72,33 @@ impl SectionKind for ISection {
         );
         let weak = with(TF * B.cubed() / 6 + clear() * TW.cubed() / 12, 4 * (IR + AR * (TW / 2 + CR).squared()));
         if given.turned {
-            // Across the web the breadth is the whole depth: the stress peaks in the flanges where the fillets end.
-            let level = with(TW / 2, R.into());
-            steps.push(step(
-                59,
-                YV,
-                "Level of the largest shear stress, beside the web",
-                Measure::Length,
-                level,
-                &source::SHEAR_STRESS,
-            ));
+            // The stress peaks at the axis, where the breadth is the whole depth, or in the flanges where the fillets end.
+            let of = |symbol| given.get(&symbol).unwrap_or(0.0);
+            let (h, b, tw, tf, r) = (of(H), of(B), of(TW), of(TF), of(R));
+            let beside = (b * b / 4.0 - (tw / 2.0 + r).powi(2)) / 2.0;
+            let at_axis = (tf * b * b / 4.0 + (h - 2.0 * tf) * tw * tw / 8.0) / h;
+            let (moment, width) = if at_axis > beside {
+                let half = TF * B.squared() / 4 + clear() * TW.squared() / 8;
+                (with(half, 2 * (AR * (TW / 2 + CR))), H.tree())
+            } else {
+                let level = with(TW / 2, R.into());
+                steps.push(step(
+                    59,
+                    YV,
+                    "Level of the largest shear stress, beside the web",
+                    Measure::Length,
+                    level,
+                    &source::SHEAR_STRESS,
+                ));
+                (TF * (B.squared() / 4 - YV.squared()), 2 * TF)
+            };
             steps.extend(ends(Ends {
                 top: B / 2,
                 bottom: B / 2,
                 inertia: weak,
                 minor_inertia: strong,
-                shear_moment: TF * (B.squared() / 4 - YV.squared()),
-                shear_width: 2 * TF,
+                shear_moment: moment,
+                shear_width: width,
                 source: &source::PARALLEL_AXES,
             }));
         } else {

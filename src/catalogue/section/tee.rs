@@ -59,43 +59,56 @@ impl SectionKind for Tee {
         );
         let upright = about_foot - AREA * YC.squared();
         let across = with(TF * B.cubed() / 12 + stem() * TW.cubed() / 12, 2 * (IR + AR * (TW / 2 + CR).squared()));
+        let of = |symbol| given.get(&symbol).unwrap_or(0.0);
+        let (h, b, tw, tf, r) = (of(H), of(B), of(TW), of(TF), of(R));
         if given.turned {
-            let level = with(TW / 2, R.into());
-            steps.push(step(
-                59,
-                YV,
-                "Level of the largest shear stress, beside the web",
-                Measure::Length,
-                level,
-                &source::SHEAR_STRESS,
-            ));
+            let beside = (b * b / 4.0 - (tw / 2.0 + r).powi(2)) / 2.0;
+            let at_axis = (tf * b * b / 8.0 + (h - tf) * tw * tw / 8.0) / h;
+            let (moment, width) = if at_axis > beside {
+                (with(TF * B.squared() / 8 + stem() * TW.squared() / 8, AR * (TW / 2 + CR)), H.tree())
+            } else {
+                let level = with(TW / 2, R.into());
+                steps.push(step(
+                    59,
+                    YV,
+                    "Level of the largest shear stress, beside the web",
+                    Measure::Length,
+                    level,
+                    &source::SHEAR_STRESS,
+                ));
+                (TF * (B.squared() / 4 - YV.squared()) / 2, TF.tree())
+            };
             steps.extend(ends(Ends {
                 top: B / 2,
                 bottom: B / 2,
                 inertia: across,
                 minor_inertia: upright,
-                shear_moment: TF * (B.squared() / 4 - YV.squared()) / 2,
-                shear_width: TF.into(),
+                shear_moment: moment,
+                shear_width: width,
                 source: &source::PARALLEL_AXES,
             }));
         } else {
-            let root = if fillet { H - TF.tree() - R } else { stem() };
-            let level = Tree::Min(vec![YC.into(), root]);
-            steps.push(step(
-                59,
-                YV,
-                "Level of the largest shear stress above the foot of the web",
-                Measure::Length,
-                level,
-                &source::SHEAR_STRESS,
-            ));
+            let area = b * tf + (h - tf) * tw;
+            let centroid = (b * tf * (h - tf / 2.0) + tw * (h - tf).powi(2) / 2.0) / area;
+            let root = h - tf - r;
+            let at_root = root.min(centroid) * (centroid - root.min(centroid) / 2.0);
+            let in_flange = (h - centroid).powi(2) / 2.0;
+            let (moment, width) = if centroid > h - tf && in_flange > at_root {
+                (B * (H - YC.tree()).squared() / 2, B.tree())
+            } else {
+                let root = if fillet { H - TF.tree() - R } else { stem() };
+                let level = Tree::Min(vec![YC.into(), root]);
+                let title = "Level of the largest shear stress above the foot of the web";
+                steps.push(step(59, YV, title, Measure::Length, level, &source::SHEAR_STRESS));
+                (TW * YV * (YC - YV / 2), TW.tree())
+            };
             steps.extend(ends(Ends {
                 top: H - YC.tree(),
                 bottom: YC.into(),
                 inertia: upright,
                 minor_inertia: across,
-                shear_moment: TW * YV * (YC - YV / 2),
-                shear_width: TW.into(),
+                shear_moment: moment,
+                shear_width: width,
                 source: &source::PARALLEL_AXES,
             }));
         }

@@ -49,6 +49,10 @@ fn samples() -> Vec<(&'static dyn SectionKind, Given)> {
             turned,
         ));
         all.push(given("tee", &[("depth", 80.0), ("width", 90.0), ("web", 30.0), ("flange", 20.0)], turned));
+        all.push(given("i", &[("depth", 100.0), ("width", 50.0), ("web", 45.0), ("flange", 8.0)], turned));
+        all.push(given("tee", &[("depth", 30.0), ("width", 60.0), ("web", 20.0), ("flange", 25.0)], turned));
+        all.push(given("tee", &[("depth", 60.0), ("width", 50.0), ("web", 40.0), ("flange", 10.0)], turned));
+        all.push(given("channel", &[("depth", 80.0), ("width", 30.0), ("web", 25.0), ("flange", 8.0)], turned));
         all.push(given("angle", &[("depth", 80.0), ("width", 60.0), ("thickness", 8.0)], turned));
         let plate =
             |width: f64, height: f64, at: f64| Plate { width: width * 1e-3, height: height * 1e-3, at: at * 1e-3 };

@@ -98,7 +98,7 @@ impl Outline {
         let mut area = 0.0;
         let mut first = [0.0, 0.0];
         for (at, points) in loops.iter().enumerate() {
-            let hole = at > 0 && points.first().is_some_and(|p| encloses(&loops[0], *p));
+            let hole = at > 0 && points.iter().all(|p| encloses(&loops[0], *p));
             let sign = if hole { -1.0 } else { 1.0 };
             for (a, b) in points.iter().zip(points.iter().cycle().skip(1)) {
                 let cross = a[0] * b[1] - b[0] * a[1];
