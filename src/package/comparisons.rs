@@ -1,6 +1,6 @@
 //! The comparison with limits and the sampling list, as the templates see them.
 use crate::document::{CheckFacts, CheckRow, Group, MatrixRow, SampleFact};
-use crate::model::{DeflectionCheck, Model};
+use crate::model::{Combination, DeflectionCheck, MemberKind, Model, Purpose};
 use crate::sheet::{Results, Sheet, ratio_text, sorted_checks};
 use crate::units::Measure;
 use crate::work::Check;
@@ -11,28 +11,16 @@ pub(super) fn facts(model: &Model, results: &Results, sheet: &Sheet) -> CheckFac
     let checks = sorted_checks(results);
     let rows: Vec<CheckRow> = checks.iter().map(|check| row(model, sheet, check)).collect();
     let count = |wanted: Option<bool>| checks.iter().filter(|c| c.ok() == wanted).count();
-    let kinds = ["stress", "shear", "deflection", "buckling", "slenderness", "stability"];
-    let kinds: Vec<String> =
-        kinds.iter().filter(|kind| asked_for(model, kind)).map(|kind| (*kind).to_owned()).collect();
+    let kinds = KINDS.iter().map(|(kind, _)| (*kind).to_owned()).collect();
     CheckFacts {
         governing: rows.first().filter(|row| !row.ratio.is_empty()).cloned(),
         within: count(Some(true)),
         beyond: count(Some(false)),
         not_checked: count(None),
-        matrix: matrix(model, &checks, &kinds),
+        matrix: matrix(model, &checks),
         kinds,
         rows,
         groups: groups(model, sheet),
-    }
-}
-
-fn asked_for(model: &Model, kind: &str) -> bool {
-    match kind {
-        "deflection" => !model.checks.deflection.is_empty(),
-        "buckling" => model.checks.buckling.is_some(),
-        "slenderness" => model.checks.slenderness.is_some(),
-        "stability" => model.checks.stability.is_some(),
-        _ => true,
     }
 }
 
@@ -71,72 +59,93 @@ fn row(model: &Model, sheet: &Sheet, check: &Check) -> CheckRow {
     }
 }
 
-/// Every member, every node with a check and the whole, against every kind of check.
-fn matrix(model: &Model, checks: &[&Check], kinds: &[String]) -> Vec<MatrixRow> {
-    let of_kind = |kind: &str, wanted: &str| kind == wanted || kind.split('.').next() == Some(wanted);
-    let is_node = |check: &Check| check.kind.starts_with("deflection.");
+/// Every member, every node with a check and the whole, under every combination, against every kind of check.
+fn matrix(model: &Model, checks: &[&Check]) -> Vec<MatrixRow> {
     let mut rows = Vec::new();
-    let mut add = |subject: &str, node: bool, why_not: &dyn Fn(&str) -> &'static str| {
-        let cells = kinds
-            .iter()
-            .map(|kind| {
-                let of: Vec<&&Check> = checks
-                    .iter()
-                    .filter(|c| c.subject == subject && is_node(c) == node && of_kind(&c.kind, kind))
-                    .collect();
-                if of.is_empty() {
-                    return why_not(kind).to_owned();
-                }
-                let unchecked = of.iter().filter(|c| c.ok().is_none()).count();
-                let worst = of.iter().filter_map(|c| c.ratio).fold(f64::NEG_INFINITY, f64::max);
-                let mut text = if worst.is_finite() {
-                    format!("{} {}", ratio_text(worst, 3), if worst > 1.0 { "BEYOND LIMIT" } else { "within" })
-                } else {
-                    String::new()
-                };
-                if unchecked > 0 {
-                    let all =
-                        if unchecked == of.len() { String::new() } else { format!(" in {unchecked} of {}", of.len()) };
-                    text =
-                        if text.is_empty() { format!("NOT CHECKED{all}") } else { format!("{text}; NOT CHECKED{all}") };
-                }
-                text
-            })
-            .collect();
-        rows.push(MatrixRow { subject: subject.to_owned(), cells });
-    };
     for (at, member) in model.members.iter().enumerate() {
-        let bends = crate::work::carries_shear(member.kind);
-        let checks = &model.checks;
-        add(&member.name, false, &|kind| match kind {
-            "stress" if !checks.stress.covers(at) => "NOT CHECKED: switched off",
-            "shear" if !bends => "– (a bar carries no shear)",
-            "shear" if !checks.shear.covers(at) => "NOT CHECKED: switched off",
-            "deflection" => "NOT CHECKED: no limit given",
-            "buckling" | "slenderness" if !bends || member.kind == crate::model::MemberKind::Frame => {
-                "– (not compressed)"
-            }
-            "buckling" | "slenderness" => "– (no axial force)",
-            "stability" => "– (of the whole)",
-            _ => "NOT CHECKED: no combination is for it",
-        });
+        for combination in &model.combinations {
+            rows.push(matrix_row(checks, &member.name, false, combination, &|kind| not_for_member(model, at, kind)));
+        }
     }
     let mut nodes = BTreeSet::new();
     for check in &model.checks.deflection {
         if let DeflectionCheck::Node { node, .. } = check
             && nodes.insert(*node)
         {
-            add(&model.nodes[*node].name, true, &|kind| {
-                if kind == "deflection" { "NOT CHECKED: no combination is for it" } else { "– (of members)" }
-            });
+            for combination in &model.combinations {
+                rows.push(matrix_row(checks, &model.nodes[*node].name, true, combination, &|_| "– (of members)"));
+            }
         }
     }
-    if model.checks.stability.is_some() {
-        add("structure", false, &|kind| {
-            if kind == "stability" { "NOT CHECKED: no combination is for it" } else { "– (of members)" }
-        });
+    for combination in &model.combinations {
+        rows.push(matrix_row(checks, crate::work::WHOLE, false, combination, &|kind| match kind {
+            "stability" => "NOT CHECKED: not asked for",
+            _ => "– (of members)",
+        }));
     }
     rows
+}
+
+/// One subject under one combination.
+fn matrix_row(
+    checks: &[&Check],
+    subject: &str,
+    node: bool,
+    combination: &Combination,
+    why_not: &dyn Fn(&str) -> &'static str,
+) -> MatrixRow {
+    let of_kind = |kind: &str, wanted: &str| kind == wanted || kind.split('.').next() == Some(wanted);
+    let cell = |(kind, purpose): &(&str, Purpose)| {
+        let of: Vec<&&Check> = checks
+            .iter()
+            .filter(|c| c.subject == subject && c.combination == combination.name)
+            .filter(|c| c.kind.starts_with("deflection.") == node && of_kind(&c.kind, kind))
+            .collect();
+        if of.is_empty() {
+            let why = why_not(kind);
+            let excluded =
+                !combination.is_for(*purpose) && (!why.starts_with('–') || why.ends_with("(not compressed)"));
+            return if excluded { "– (the combination is not for it)".to_owned() } else { why.to_owned() };
+        }
+        let worst = of.iter().filter_map(|c| c.ratio).reduce(f64::max).map(|ratio| ratio_text(ratio, 3));
+        match (of.iter().any(|c| c.ok() == Some(false)), of.iter().any(|c| c.ok().is_none()), worst) {
+            (true, _, Some(worst)) => format!("{worst} BEYOND LIMIT"),
+            (_, true, Some(worst)) => format!("{worst} in part; NOT CHECKED in part"),
+            (_, true, None) => "NOT CHECKED".into(),
+            (_, _, worst) => format!("{} within", worst.unwrap_or_default()),
+        }
+    };
+    MatrixRow { subject: format!("{subject}, {}", combination.name), cells: KINDS.iter().map(cell).collect() }
+}
+
+/// Every kind of check there is; what was not asked for is said to be so.
+const KINDS: [(&str, Purpose); 6] = [
+    ("stress", Purpose::Stress),
+    ("shear", Purpose::Shear),
+    ("deflection", Purpose::Deflection),
+    ("buckling", Purpose::Buckling),
+    ("slenderness", Purpose::Slenderness),
+    ("stability", Purpose::Stability),
+];
+
+/// Why a member has no row of a kind.
+fn not_for_member(model: &Model, member: usize, kind: &str) -> &'static str {
+    let checks = &model.checks;
+    let of = model.members[member].kind;
+    let bends = crate::work::carries_shear(of);
+    match kind {
+        "stress" if !checks.stress.covers(member) => "NOT CHECKED: switched off",
+        "shear" if !bends => "– (a bar carries no shear)",
+        "shear" if !checks.shear.covers(member) => "NOT CHECKED: switched off",
+        "deflection" if !bends => "– (a bar stays straight)",
+        "deflection" => "NOT CHECKED: no limit given",
+        "buckling" | "slenderness" if of == MemberKind::Beam => "– (no axial force)",
+        "buckling" if checks.buckling.is_none() => "NOT CHECKED: not asked for",
+        "slenderness" if checks.slenderness.is_none() => "NOT CHECKED: not asked for",
+        "buckling" | "slenderness" => "– (not compressed)",
+        "stability" => "– (of the whole)",
+        _ => "NOT CHECKED: not asked for",
+    }
 }
 
 /// Comparisons that stand on no member sheet.

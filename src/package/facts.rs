@@ -357,9 +357,6 @@ fn member_sheets(model: &Model, results: &Results, sheet: &Sheet, steps: &Index)
     for (at, member) in model.members.iter().enumerate() {
         let name = &member.name;
         let worked: Vec<usize> = (0..model.combinations.len()).filter(|c| is_worked(model, results, at, *c)).collect();
-        if worked.is_empty() {
-            continue;
-        }
         let of_combination = |c: &usize| {
             let combination = &model.combinations[*c].name;
             let wanted: Vec<Wanted<'_>> = vec![

@@ -88,7 +88,18 @@ fn check_governing(package: &Package, findings: &mut Vec<Finding>, coverage: &mu
         let tokens = || text.split_whitespace().map(|t| t.trim_matches(|c: char| !c.is_alphanumeric() && c != '−'));
         let numbers: Vec<PrintedNumber> = tokens().filter_map(|token| parse_printed(token).ok()).collect();
         let named = tokens().find_map(|token| compared.get(token).copied());
-        let Some(step) = named.or(largest) else { continue };
+        let Some(step) = named else {
+            // Without a step the ratio is that of a member that stands in the tables: none that is worked may be greater.
+            if let Some(largest) = largest
+                && !numbers.iter().any(|number| number.si() >= largest.result.si())
+            {
+                let expected =
+                    format!("`{}` of step {}, the largest, or a greater one", largest.result, largest.number);
+                let found = numbers.last().map_or("no number".into(), |number| format!("`{number}`"));
+                findings.push(Finding::at(*line, expected, found));
+            }
+            continue;
+        };
         if !numbers.iter().any(|number| number.prints_as(&step.result)) {
             let found = numbers.last().map_or("no number".into(), |number| format!("`{number}`"));
             findings.push(Finding::at(*line, format!("`{}`, the result of step {}", step.result, step.number), found));

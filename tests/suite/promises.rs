@@ -36,6 +36,26 @@ fn every_demo_is_confirmed_from_its_markdown_alone() {
     );
 }
 
+/// The same promises hold whatever is worked line by line.
+#[test]
+fn every_detail_is_confirmed() {
+    let path = Path::new(env!("CARGO_MANIFEST_DIR")).join("demo-inputs/timber-canopy.yaml");
+    let text = fs::read_to_string(path).expect("demo");
+    let mut faults = Vec::new();
+    for detail in ["summary", "governing", "full"] {
+        let text = text
+            .replace("  detail: governing\n", "")
+            .replace("\ndisplay:\n", &format!("\ndisplay:\n  detail: {detail}\n"));
+        faults.extend(unconfirmed(detail, &pack(&text, "canopy.yaml").markdown, &text));
+    }
+    assert!(
+        faults.is_empty(),
+        "{} faults:\n{}",
+        faults.len(),
+        faults.iter().take(20).cloned().collect::<Vec<_>>().join("\n")
+    );
+}
+
 /// Published cases and random structures: every kind of support, load, member and section, in both families of units.
 #[test]
 fn every_case_is_confirmed_from_its_markdown_alone() {
