@@ -87,6 +87,15 @@ mod tests {
         );
     }
 
+    /// U+2028 ends a line for YAML 1.1 and not for YAML 1.2, and each of the two readers follows one of them.
+    #[test]
+    fn what_two_readers_understand_differently_is_refused_where_it_stands() {
+        let text = "a: 1\nb: one\u{2028}two\n";
+        let faults = read(&Source::new(text)).expect_err("the readers differ");
+        let found: Vec<_> = faults.iter().map(|d| (d.code, d.span.clone())).collect();
+        assert_eq!(found, [(Code::TwoReadings, Some(8..17))]);
+    }
+
     #[test]
     fn nothing_is_no_file() {
         for text in ["", "\n", "# only a remark\n", "\u{feff}"] {

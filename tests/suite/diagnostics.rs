@@ -120,6 +120,32 @@ fn a_file_with_every_key_is_understood() {
     assert_eq!(model.checks.stability, Some(10.0));
 }
 
+/// The shapes with the very lines of the manual, turned where that is allowed.
+#[test]
+fn every_shape_is_read_as_the_manual_writes_it() {
+    let shapes = [
+        "{shape: rectangle, depth: 200 mm, width: 50 mm}",
+        "{shape: round, diameter: 24 mm}",
+        "{shape: tube, diameter: 114.3 mm, wall: 5 mm}",
+        "{shape: box, depth: 100 mm, width: 100 mm, wall: 5 mm, outer_radius: 7.5 mm, inner_radius: 5 mm}",
+        "{shape: box, depth: 100 mm, width: 100 mm, wall: 5 mm}",
+        "{shape: i, depth: 200 mm, width: 100 mm, web: 5.6 mm, flange: 8.5 mm, fillet: 12 mm}",
+        "{shape: i, depth: 200 mm, width: 100 mm, web: 5.6 mm, flange: 8.5 mm, source: R1, shear_area: 11 cm2}",
+        "{shape: channel, depth: 200 mm, width: 75 mm, web: 8.5 mm, flange: 11.5 mm, fillet: 0 mm}",
+        "{shape: tee, depth: 100 mm, width: 100 mm, web: 6 mm, flange: 9 mm, fillet: 0 mm, turned: true}",
+        "{shape: angle, depth: 80 mm, width: 80 mm, thickness: 8 mm, turned: yes}",
+        "{shape: plates, plates: [{width: 150 mm, height: 12 mm, at: 106 mm}, {width: 8 mm, height: 200 mm, at: 0 mm}]}",
+        "{shape: given, area: 2848 mm2, inertia: 19.43e6 mm4, top: 100 mm, bottom: 100 mm, minor_inertia: 1.42e6 mm4, shear_area: 1120 mm2, source: R3}",
+    ];
+    for shape in shapes {
+        let model = read(&VALID.replace("  rod: {", &format!("  S: {shape}\n  rod: {{"))).model;
+        let section = model.sections.iter().find(|section| section.name == "S").expect("section");
+        assert!(shape.contains(&format!("shape: {}", section.kind.name())), "{shape}");
+        assert_eq!(section.shear_area.is_some(), shape.contains("shear_area"), "{shape}");
+        assert_eq!(section.given.turned, shape.contains("turned"), "{shape}");
+    }
+}
+
 #[test]
 fn without_combinations_each_case_stands_alone() {
     let at = VALID.find("combinations:").expect("block");

@@ -6,6 +6,7 @@ use super::leaf::{listed, number, read_flag};
 use super::load::{self, Scope};
 use crate::diagnostic::{Code, Diagnostic, Diagnostics};
 use crate::input::Raw;
+use std::collections::BTreeSet;
 
 pub(super) fn read(root: &Fields<'_>, scope: &Scope<'_>, faults: &mut Diagnostics) -> Vec<LoadCase> {
     let entries = root.entries("load_cases", faults).iter();
@@ -40,7 +41,8 @@ fn self_weight(raw: &Raw, what: &str) -> Result<f64, Diagnostic> {
 
 /// A fault if members are made of materials without density.
 fn weightless(raw: &Raw, case: &str, scope: &Scope<'_>) -> Option<Diagnostic> {
-    let used = |material: usize| scope.members.iter().any(|member| member.material == material);
+    let materials: BTreeSet<usize> = scope.members.iter().map(|member| member.material).collect();
+    let used = |material: usize| materials.contains(&material);
     let lacking = scope.materials.iter().enumerate().filter(|(at, material)| material.density.is_none() && used(*at));
     let names = listed(lacking.map(|(_, material)| material.name.as_str()), "and");
     (!names.is_empty()).then(|| {

@@ -17,8 +17,8 @@ pub(super) fn read(root: &Fields<'_>, faults: &mut Diagnostics) -> Vec<Option<Se
 
 /// Whether a section has a property, given or worked out.
 pub(super) fn has(section: &Section, property: &Symbol) -> bool {
-    section.given.get(property).is_some()
-        || section.kind.steps(&section.given).iter().any(|(_, step)| step.symbol() == property)
+    // The steps of every other shape end with all properties known.
+    section.kind.name() != "given" || section.given.get(property).is_some()
 }
 
 fn section(raw: &Raw, name: &str, faults: &mut Diagnostics) -> Option<Section> {

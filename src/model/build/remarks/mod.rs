@@ -111,9 +111,10 @@ fn unusual(model: &Model) -> Vec<Diagnostic> {
             );
         }
     }
+    let depths: Vec<Option<f64>> = model.sections.iter().map(depth).collect();
     for member in model.members.iter().filter(|m| matches!(m.kind, MemberKind::Beam | MemberKind::Frame)) {
         let length = place::length(member, &model.nodes);
-        let depth = model.sections.get(member.section).and_then(depth);
+        let depth = depths.get(member.section).copied().flatten();
         if let Some(depth) = depth.filter(|depth| *depth < SHALLOWEST * length) {
             let warning = Diagnostic::warning(Code::Suspicious, address("members", &member.name).key("section"));
             let warning = warning.message(format!("member `{}` is unusually slender", member.name));
