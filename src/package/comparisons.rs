@@ -105,7 +105,7 @@ fn matrix_row(
             let why = why_not(kind);
             let excluded =
                 !combination.is_for(*purpose) && (!why.starts_with('–') || why.ends_with("(not compressed)"));
-            return if excluded { "– (the combination is not for it)".to_owned() } else { why.to_owned() };
+            return if excluded { "– (combination for others)".to_owned() } else { why.to_owned() };
         }
         let worst = of.iter().filter_map(|c| c.ratio).reduce(f64::max).map(|ratio| ratio_text(ratio, 3));
         match (of.iter().any(|c| c.ok() == Some(false)), of.iter().any(|c| c.ok().is_none()), worst) {

@@ -1,4 +1,5 @@
 //! One member under one combination: movements, strain, stress, end force (steps L, D, E, S, F).
+use super::factor::times_factor;
 use super::{CaseLoad, MemberBase};
 use crate::catalogue::element::{bar, bar3, bending, joint, movement};
 use crate::catalogue::symbol::*;
@@ -302,14 +303,7 @@ pub(super) fn weighted_sum(
         .map(|(at, (factor, value))| {
             let part = Symbol::indexed(&stem, at + 1);
             scope.set(&part, *value);
-            match factor {
-                Some(factor) => {
-                    let gamma = Symbol::indexed("γ", at + 1);
-                    scope.set(&gamma, *factor);
-                    gamma * part.tree()
-                }
-                None => part.tree(),
-            }
+            times_factor(scope, at + 1, *factor, part)
         })
         .collect();
     let definition =

@@ -1,4 +1,5 @@
 //! Balance of every node (steps N) and of the whole (steps R), from end forces, loads and reactions.
+use super::factor::times_factor;
 use super::{CaseLoad, MemberForces, factor};
 use crate::formula::{Definition, Scope, Symbol, Tree, Value, Worksheet, source};
 use crate::model::{Action, Combination, MemberKind, Model};
@@ -33,14 +34,7 @@ impl Parts {
         self.count += 1;
         let part = Symbol::indexed("F", self.count);
         scope.set(&part, value);
-        let term = match factor {
-            Some(factor) => {
-                let gamma = Symbol::indexed("γ", self.count);
-                scope.set(&gamma, factor);
-                gamma * part.tree()
-            }
-            None => part.tree(),
-        };
+        let term = times_factor(scope, self.count, factor, part);
         self.terms.push(if minus { -term } else { term });
     }
 }
@@ -277,14 +271,7 @@ fn spring(
     for (at, (gamma, amount)) in set.into_iter().enumerate() {
         let part = Symbol::indexed("d", at + 1);
         scope.set(&part, amount);
-        let term = match gamma {
-            Some(gamma) => {
-                let symbol = Symbol::indexed("γ", at + 1);
-                scope.set(&symbol, gamma);
-                symbol * part.tree()
-            }
-            None => part.tree(),
-        };
+        let term = times_factor(scope, at + 1, gamma, part);
         shift.push(-term);
     }
     let tree = -(stiffness * Tree::sum(shift));

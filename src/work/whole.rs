@@ -1,4 +1,5 @@
 //! Loads and reactions of the whole structure about the global origin (steps R).
+use super::factor::times_factor;
 use super::node::AllLoads;
 use super::{NodeBalance, factor, node_load};
 use crate::formula::{Definition, Scope, Symbol, Tree, Value, Worksheet, source};
@@ -125,14 +126,7 @@ pub fn work_whole(
             let Some(total) = totals[*case][direction] else { continue };
             let part = Symbol::indexed("A", at + 1);
             scope.set(&part, total);
-            terms.push(match gamma {
-                Some(gamma) => {
-                    let symbol = Symbol::indexed("γ", at + 1);
-                    scope.set(&symbol, *gamma);
-                    symbol * part.tree()
-                }
-                None => part.tree(),
-            });
+            terms.push(times_factor(&mut scope, at + 1, *gamma, part));
         }
         let symbols =
             [["A_x", "A_y", "A_m"], ["R_X", "R_Y", "R_M"], ["B_X", "B_Y", "B_M"]].map(|s| Symbol::new(s[direction]));

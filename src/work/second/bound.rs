@@ -4,6 +4,7 @@ use crate::catalogue::symbol::{L, MF1, MF2};
 use crate::formula::{Definition, Scope, Symbol, Tree, Value, Worksheet, source};
 use crate::model::{Combination, Member};
 use crate::units::Measure;
+use crate::work::factor::factor_symbol;
 use crate::work::{Extremes, FactoredLoad, MemberForces};
 
 /// Moment of a member against the sum of what each load would give on a simple span (steps X61, X62).
@@ -53,12 +54,8 @@ pub fn work_bound(
             _ => None,
         };
         let Some(term) = term else { continue };
-        terms.push(match gamma {
-            Some(gamma) => {
-                let symbol = Symbol::indexed("γ", at);
-                scope.set(&symbol, *gamma);
-                symbol.tree().absolute() * term
-            }
+        terms.push(match factor_symbol(&mut scope, at, *gamma) {
+            Some(factor) => factor.tree().absolute() * term,
             None => term,
         });
     }

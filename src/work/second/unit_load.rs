@@ -4,6 +4,7 @@ use crate::catalogue::symbol::{BB, BV, L, M1, M2};
 use crate::formula::{Definition, Scope, Symbol, Tree, Value, Worksheet, source};
 use crate::model::{Combination, Member};
 use crate::units::Measure;
+use crate::work::factor::times_factor;
 use crate::work::{Extremes, FactoredLoad, MemberForces};
 
 /// The deflection again by unit load on a simple span, from the end moments and the loads (steps X71, X72).
@@ -63,14 +64,7 @@ pub fn work_unit_load(
             // Loads over a part and couples have no short formula here.
             _ => return,
         };
-        let term = match gamma {
-            Some(gamma) => {
-                let symbol = Symbol::indexed("γ", index);
-                scope.set(&symbol, *gamma);
-                symbol * term
-            }
-            None => term,
-        };
+        let term = times_factor(&mut scope, index, *gamma, term);
         if is_free { free.push(term) } else { terms.push(term) }
     }
     let mut all = vec![Tree::sum(terms) / BB];
