@@ -20,6 +20,11 @@ impl EmbeddedFace {
         format!("F{}", self.index)
     }
 
+    /// Its name in the file: the mark of a subset and the face's own.
+    pub(super) fn base_name(&self) -> &str {
+        self.parsed.font_name.as_deref().unwrap_or_default()
+    }
+
     pub(super) fn font(&self) -> PdfFont {
         PdfFont::new(self.parsed.clone())
     }

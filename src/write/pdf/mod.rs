@@ -1,12 +1,18 @@
-//! Pages as PDF: printpdf writes fonts, pages and links; the glyphs are placed by streams of our own.
+//! Pages as PDF: printpdf writes the fonts, everything else is written straight into the file.
 mod content;
 mod face;
-mod finish;
+mod facts;
+mod file;
+mod fonts;
+mod ink;
+mod outline;
+mod page;
 
 use crate::document::RunningHead;
 use crate::typeset::{Fonts, Pages};
 use face::EmbeddedFace;
-use printpdf::{FontId, PdfDocument, PdfPage, PdfSaveOptions, Pt, Rect};
+use file::{File, Number, pack, side_by_side};
+use sha2::{Digest, Sha256};
 use std::fmt;
 
 /// What the file says about itself.
@@ -38,6 +44,14 @@ impl Facts {
             producer: concat!("calcsheaf ", env!("CARGO_PKG_VERSION")).into(),
         }
     }
+
+    /// Year, month and day of the date; nothing where it is not written `YYYY-MM-DD`.
+    fn day(&self) -> Option<[&str; 3]> {
+        let mut parts = self.date.splitn(3, '-');
+        let day = [parts.next()?, parts.next()?, parts.next()?];
+        let whole = |part: &str, digits| part.len() == digits && part.bytes().all(|byte| byte.is_ascii_digit());
+        (whole(day[0], 4) && whole(day[1], 2) && whole(day[2], 2)).then_some(day)
+    }
 }
 
 /// Why no PDF could be written.
@@ -45,15 +59,12 @@ impl Facts {
 pub enum PdfFault {
     /// A font could not be reduced to the glyphs in use.
     Font(String),
-    /// The file could not be put together.
-    File(String),
 }
 
 impl fmt::Display for PdfFault {
     fn fmt(&self, f: &mut fmt::Formatter<'_>) -> fmt::Result {
         match self {
             Self::Font(reason) => write!(f, "a font could not be embedded: {reason}"),
-            Self::File(reason) => write!(f, "the PDF could not be put together: {reason}"),
         }
     }
 }
@@ -63,38 +74,37 @@ impl std::error::Error for PdfFault {}
 /// Writes pages as PDF 1.7. The same pages give the same bytes.
 ///
 /// # Errors
-/// A font cannot be subset, or the file cannot be put together; neither happens with the built-in fonts.
+/// A font cannot be subset; this does not happen with the built-in fonts.
 pub fn write(pages: &Pages, fonts: &Fonts, facts: &Facts) -> Result<Vec<u8>, PdfFault> {
     let faces = face::in_use(pages, fonts)?;
-    let mut pdf = PdfDocument::new(&facts.title);
-    let mut carriers = Vec::new();
-    for face in faces.iter().flatten() {
-        pdf.resources.fonts.map.insert(FontId(face.resource()), face.font());
-        carriers.extend(face.carrier());
+    let mut file = File::new();
+    let [catalog, tree, resources, info, metadata] = std::array::from_fn(|_| file.number());
+    let sheets = file.numbers(pages.sheets.len());
+    let contents = file.numbers(pages.sheets.len());
+    let fonts = fonts::embed(&faces, &mut file);
+    let drawn = side_by_side((0..pages.sheets.len()).collect(), |at: usize| {
+        let content = content::stream(&pages.sheets[at], pages.height, &faces);
+        (pack(&content), page::object(pages, at, tree, &sheets, contents.start + at as Number))
+    });
+    let mut identity = Sha256::new();
+    for ((content, object), at) in drawn.into_iter().zip(0..) {
+        identity.update(&content);
+        identity.update(&object);
+        file.stream(contents.start + at, String::new(), content);
+        file.object(sheets.start + at, &object);
     }
-    pdf.pages = pages.sheets.iter().map(|_| page(pages)).collect();
-    if let Some(first) = pdf.pages.first_mut() {
-        // printpdf embeds what the pages show: these operations name every glyph in use, and the stream they
-        // make is replaced with the others.
-        first.ops.extend(carriers);
-    }
-    let options = PdfSaveOptions { optimize: false, subset_fonts: false, ..PdfSaveOptions::default() };
-    let document = pdf.to_lopdf_document(&options, &mut Vec::new());
-    let streams = pages.sheets.iter().map(|sheet| content::stream(sheet, pages.height, &faces));
-    finish::finish(document, streams, pages, facts)
-}
-
-/// An empty page of the size of a sheet; its stream and links are put in at the end.
-fn page(pages: &Pages) -> PdfPage {
-    let mut page = PdfPage::new(printpdf::Mm(0.0), printpdf::Mm(0.0), Vec::new());
-    let whole = Rect::from_xywh(Pt(0.0), Pt(0.0), Pt(tidy(pages.width)), Pt(tidy(pages.height)));
-    (page.media_box, page.trim_box, page.crop_box) = (whole.clone(), whole.clone(), whole);
-    page
-}
-
-/// A length to a hundredth of a point, as it is written.
-fn tidy(length: f32) -> f32 {
-    (length * 100.0).round() / 100.0
+    file.object(tree, &page::tree(pages, &sheets, resources));
+    file.object(resources, &page::resources(&fonts));
+    let outline = outline::write(&mut file, &pages.outline, &sheets, pages.height);
+    file.object(catalog, &facts::catalog(tree, metadata, outline));
+    let information = facts::information(facts);
+    identity.update(&information);
+    file.object(info, &information);
+    file.plain_stream(metadata, "/Type/Metadata/Subtype/XML".into(), facts::metadata(facts).into_bytes());
+    let digest: [u8; 32] = identity.finalize().into();
+    let mut short = [0; 16];
+    short.copy_from_slice(&digest[..16]);
+    Ok(file.finish(catalog, info, &short))
 }
 
 type Faces = [Option<EmbeddedFace>; 6];
