@@ -1,7 +1,7 @@
 //! Distributes what is set over sheets: nothing is cut that fits on one, headings stay with what they head.
 use super::frame::Frame;
 use super::geometry::Geometry;
-use std::rc::Rc;
+use std::sync::Arc;
 
 /// A strip that is never cut, as wide as the sheet.
 #[derive(Debug, Default)]
@@ -16,7 +16,7 @@ pub(super) struct Slab {
     /// Whether the next slab must stand on the same sheet.
     pub(super) keep: bool,
     /// What is repeated above it where it comes first on a sheet.
-    pub(super) head: Option<Rc<Slab>>,
+    pub(super) head: Option<Arc<Slab>>,
 }
 
 /// Sheets being filled.
@@ -119,8 +119,8 @@ mod tests {
 
     #[test]
     fn a_head_is_repeated_on_the_next_sheet() {
-        let head = Rc::new(slab(15.0, false));
-        let rows = (0..100).map(|_| Slab { head: Some(Rc::clone(&head)), ..slab(12.0, false) });
+        let head = Arc::new(slab(15.0, false));
+        let rows = (0..100).map(|_| Slab { head: Some(Arc::clone(&head)), ..slab(12.0, false) });
         let flow = flow_of(rows.collect());
         assert!(flow.sheets.len() > 1);
         let total: usize = flow.sheets.iter().map(|sheet| sheet.items.len()).sum();

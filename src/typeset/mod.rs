@@ -1,6 +1,7 @@
 //! Sets a document on paper: frames of placed glyphs, rules and paths. Knows no PDF.
 mod block;
 mod contents;
+pub(crate) mod cores;
 mod figure;
 #[cfg(test)]
 pub(crate) mod fixture;
@@ -86,18 +87,37 @@ pub fn typeset(document: &Document, sheet: &Sheet, paper: Paper, fonts: &Fonts) 
     let mut setter = Setter::new(fonts);
     let mut flow = Flow::new(geometry);
     let column = Column { left: geometry.text, geometry: &geometry, sheet, document };
-    for (at, block) in document.blocks.iter().enumerate() {
-        if matches!(block, Block::NewSheet) {
-            flow.new_sheet();
+    // Blocks are set by themselves, side by side, and poured on to the sheets in order.
+    let parts = document.blocks.len().div_ceil(BLOCKS);
+    let set = cores::side_by_side(
+        parts,
+        || (),
+        |(), part| {
+            let mut setter = Setter::new(fonts);
+            let blocks = (part * BLOCKS..document.blocks.len().min((part + 1) * BLOCKS))
+                .map(|at| {
+                    let mut slabs = block::set(&document.blocks[at], column, &mut setter);
+                    if introduces(&document.blocks, at)
+                        && slabs.len() <= INTRODUCTION
+                        && let Some(last) = slabs.last_mut()
+                    {
+                        last.keep = true;
+                    }
+                    slabs
+                })
+                .collect::<Vec<_>>();
+            (blocks, setter.missing)
+        },
+    );
+    let mut blocks = document.blocks.iter();
+    for (part, missing) in set {
+        setter.missing.extend(missing);
+        for slabs in part {
+            if matches!(blocks.next(), Some(Block::NewSheet)) {
+                flow.new_sheet();
+            }
+            slabs.into_iter().for_each(|slab| flow.push(slab));
         }
-        let mut slabs = block::set(block, column, &mut setter);
-        if introduces(&document.blocks, at)
-            && slabs.len() <= INTRODUCTION
-            && let Some(last) = slabs.last_mut()
-        {
-            last.keep = true;
-        }
-        slabs.into_iter().for_each(|slab| flow.push(slab));
     }
     flow.settle();
     let mut sheets = flow.sheets;
@@ -118,6 +138,9 @@ pub fn typeset(document: &Document, sheet: &Sheet, paper: Paper, fonts: &Fonts) 
     pages.missing = setter.missing;
     pages
 }
+
+/// Blocks set at a time.
+const BLOCKS: usize = 32;
 
 /// Lines of a paragraph that stays with what it introduces.
 const INTRODUCTION: usize = 3;

@@ -7,7 +7,7 @@ use crate::typeset::flow::Slab;
 use crate::typeset::frame::{Anchor, Frame, Item, Rule};
 use crate::typeset::geometry::{Geometry, SMALL};
 use crate::typeset::text::{Setter, Type};
-use std::rc::Rc;
+use std::sync::Arc;
 
 /// Distance from row to row over the size of type, and of rows left open for writing.
 const LEADING: f32 = 1.46;
@@ -29,7 +29,7 @@ pub(super) fn set(content: &Content2D, layout: &Layout, left: f32, setter: &mut 
         head = continued(id, head, setter, g);
     }
     // A head that would fill the next sheet is not repeated.
-    let repeated = (head.height < WHOLE * g.body()).then(|| Rc::new(head));
+    let repeated = (head.height < WHOLE * g.body()).then(|| Arc::new(head));
     for at in 0..count {
         let mut lines = row(content, at, layout, left, setter);
         let Some(mut slab) = lines.pop() else { continue };

@@ -1,9 +1,8 @@
 //! The file around the pages: objects gathered into packed streams, a cross-reference stream at the end.
 //!
 //! ISO 32000-1, 7.5.7 (object streams) and 7.5.8 (cross-reference streams).
-use flate2::Compression;
-use flate2::write::ZlibEncoder;
-use std::io::Write;
+use crate::typeset::cores::side_by_side;
+use flate2::{Compress, Compression, FlushCompress, Status};
 use std::ops::Range;
 
 /// Number of an object; every object is of generation 0.
@@ -97,7 +96,7 @@ impl File {
             widths[1],
             widths[2]
         );
-        write_stream(&mut bytes, &Stream { number, entries, packed: pack(&table), filter: PACKED });
+        write_stream(&mut bytes, &Stream { number, entries, packed: Packer::new().pack(&table), filter: PACKED });
         bytes.extend_from_slice(format!("startxref\n{start}\n%%EOF\n").as_bytes());
         bytes
     }
@@ -125,7 +124,8 @@ impl File {
             contents.push((number, entries, content));
             (from, first) = (begin, first + count);
         }
-        for (number, entries, packed) in side_by_side(contents, |(n, entries, content)| (n, entries, pack(&content))) {
+        let packed = side_by_side(contents.len(), Packer::new, |packer, at| packer.pack(&contents[at].2));
+        for ((number, entries, _), packed) in contents.into_iter().zip(packed) {
             self.stream(number, entries, packed);
         }
     }
@@ -163,27 +163,29 @@ fn table(places: &[Place], largest: usize) -> (Vec<u8>, [usize; 3]) {
     (table, widths)
 }
 
-/// Bytes packed; higher levels take twice the time for a few hundredths of the size.
-pub(super) fn pack(content: &[u8]) -> Vec<u8> {
-    let mut encoder = ZlibEncoder::new(Vec::with_capacity(content.len() / 3), Compression::new(3));
-    // Writing to memory does not fail.
-    encoder.write_all(content).and_then(|()| encoder.finish()).unwrap_or_default()
+/// Packs one stream after another with the same tables: to clear them for every stream would cost as much as packing.
+pub(super) struct Packer(Compress);
+
+impl Packer {
+    pub(super) fn new() -> Self {
+        // Higher levels take twice the time for a few hundredths of the size.
+        Self(Compress::new(Compression::new(LEVEL), true))
+    }
+
+    pub(super) fn pack(&mut self, content: &[u8]) -> Vec<u8> {
+        self.0.reset();
+        let mut packed = Vec::with_capacity(content.len() / 2 + 64);
+        loop {
+            let read = content.len().min(self.0.total_in() as usize);
+            match self.0.compress_vec(&content[read..], &mut packed, FlushCompress::Finish) {
+                Ok(Status::StreamEnd) => return packed,
+                // More room, then on.
+                Ok(_) => packed.reserve(content.len() / 2 + 64),
+                // Only a wrong dictionary or level is an error here (flate2), and there is neither.
+                Err(_) => return packed,
+            }
+        }
+    }
 }
 
-/// Works every item on as many cores as there are; the order is kept.
-pub(super) fn side_by_side<T: Send, R: Send>(items: Vec<T>, work: impl Fn(T) -> R + Sync) -> Vec<R> {
-    let cores = std::thread::available_parallelism().map_or(1, usize::from).min(8);
-    let share = items.len().div_ceil(cores).max(1);
-    if items.len() <= share {
-        return items.into_iter().map(work).collect();
-    }
-    let mut waiting = items.into_iter();
-    let parts: Vec<Vec<T>> = (0..cores).map(|_| waiting.by_ref().take(share).collect()).collect();
-    std::thread::scope(|scope| {
-        let work = &work;
-        let parts: Vec<_> =
-            parts.into_iter().map(|part| scope.spawn(move || part.into_iter().map(work).collect::<Vec<_>>())).collect();
-        // A part is lost only with its thread, which does not stop before its work is done.
-        parts.into_iter().flat_map(|part| part.join().unwrap_or_default()).collect()
-    })
-}
+const LEVEL: u32 = 1;

@@ -1,6 +1,6 @@
 //! The fonts, as printpdf writes them, brought over into the file.
 use super::Faces;
-use super::file::{File, Number, pack};
+use super::file::{File, Number, Packer};
 use super::ink::Ink;
 use lopdf::{Dictionary, Document, Object, ObjectId};
 use printpdf::{FontId, Mm, PdfDocument, PdfPage, PdfSaveOptions};
@@ -18,7 +18,8 @@ pub(super) fn embed(faces: &Faces, file: &mut File) -> Vec<u8> {
     pdf.pages = vec![page];
     let options = PdfSaveOptions { optimize: false, subset_fonts: false, ..PdfSaveOptions::default() };
     let document = pdf.to_lopdf_document(&options, &mut Vec::new());
-    let mut carrier = Carrier { document: &document, file, numbers: BTreeMap::new(), waiting: Vec::new() };
+    let mut carrier =
+        Carrier { document: &document, file, numbers: BTreeMap::new(), waiting: Vec::new(), packer: Packer::new() };
     let mut names = Ink::default();
     for face in faces.iter().flatten() {
         let resource = face.resource();
@@ -50,6 +51,7 @@ struct Carrier<'c> {
     file: &'c mut File,
     numbers: BTreeMap<ObjectId, Number>,
     waiting: Vec<ObjectId>,
+    packer: Packer,
 }
 
 impl Carrier<'_> {
@@ -76,7 +78,7 @@ impl Carrier<'_> {
                     }
                     self.entries(&dict, &mut ink);
                     let entries = String::from_utf8_lossy(&ink.0).into_owned();
-                    self.file.stream(number, entries, pack(&content));
+                    self.file.stream(number, entries, self.packer.pack(&content));
                 }
                 Some(object) => {
                     self.object(object, &mut ink);

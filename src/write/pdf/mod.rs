@@ -9,9 +9,10 @@ mod outline;
 mod page;
 
 use crate::document::RunningHead;
+use crate::typeset::cores::side_by_side;
 use crate::typeset::{Fonts, Pages};
 use face::EmbeddedFace;
-use file::{File, Number, pack, side_by_side};
+use file::{File, Number, Packer};
 use sha2::{Digest, Sha256};
 use std::fmt;
 
@@ -82,9 +83,9 @@ pub fn write(pages: &Pages, fonts: &Fonts, facts: &Facts) -> Result<Vec<u8>, Pdf
     let sheets = file.numbers(pages.sheets.len());
     let contents = file.numbers(pages.sheets.len());
     let fonts = fonts::embed(&faces, &mut file);
-    let drawn = side_by_side((0..pages.sheets.len()).collect(), |at: usize| {
+    let drawn = side_by_side(pages.sheets.len(), Packer::new, |packer, at| {
         let content = content::stream(&pages.sheets[at], pages.height, &faces);
-        (pack(&content), page::object(pages, at, tree, &sheets, contents.start + at as Number))
+        (packer.pack(&content), page::object(pages, at, tree, &sheets, contents.start + at as Number))
     });
     let mut identity = Sha256::new();
     for ((content, object), at) in drawn.into_iter().zip(0..) {
