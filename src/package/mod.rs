@@ -147,7 +147,7 @@ impl Solved {
         let (texts, pdf) = std::thread::scope(|scope| {
             let pdf = scope.spawn(|| self.pdf(&package, fonts));
             let texts = package.texts(self);
-            (texts, pdf.join().unwrap_or_else(|_| Err("the page writer stopped".into())))
+            (texts, pdf.join().unwrap_or_else(|reason| std::panic::resume_unwind(reason)))
         });
         let (markdown, results, figures) = texts;
         Ok((Package { markdown, results, figures, ..package }, pdf?))
@@ -155,8 +155,12 @@ impl Solved {
 
     /// Sheet and document of a package, nothing written yet.
     fn document(&self, name: &str, text: &str, templates: &Templates) -> Result<Package, document::TemplateFault> {
-        let mut sheet = sheet::compose(&self.model, &self.solution, &self.results);
-        sheet.figures = figures::draw(&self.model, &self.solution, &self.results);
+        let (drawn, mut sheet) = std::thread::scope(|scope| {
+            let drawn = scope.spawn(|| figures::draw(&self.model, &self.solution, &self.results));
+            let sheet = sheet::compose(&self.model, &self.solution, &self.results);
+            (drawn.join(), sheet)
+        });
+        sheet.figures = drawn.unwrap_or_else(|reason| std::panic::resume_unwind(reason));
         let origin = Origin { name, text, sha256: &self.sha256 };
         let cautions = failure::cautions(&self.model, &self.solution);
         let facts = facts(&self.model, &self.solution, &self.results, &sheet, cautions, origin);
