@@ -2,10 +2,11 @@
 //!
 //! Each result owes significant digits, or digits of a stated size where it is zero by nature: one unit of that last
 //! place is what it can bear. Walking the steps backwards, what a result can bear divided by the derivative of its
-//! formula is what an operand may be off by; the strictest user counts. A quantity that others draw on is printed to
-//! a tenth of that, so that the roundings of a whole chain stay below the last place of what the chain leads to.
+//! formula is what an operand may be off by; the strictest user counts. The rounding of a quantity that others draw
+//! on takes a part of that, so that the roundings of a chain stay below the last place of what the chain leads to.
 //! Then, walking forwards, each result is printed as the number nearest to its value that lies within a
 //! unit of what its *printed* operands give: every line closes by construction, whatever the length of the chain.
+//! Where that leaves a result too far from its value, its operands get a digit more.
 //! # Source
 //! Own rule; propagation of rounding by first derivatives is common practice.
 use super::{Ledger, Rule, Sheet, Step};
@@ -16,11 +17,14 @@ pub const SHARED_DIGITS: i32 = 7;
 /// Most digits a typed input is printed with, should its unit be converted.
 const TYPED_DIGITS: i32 = 9;
 /// Part of what its users can bear that the rounding of an operand may take.
-const GUARD: f64 = 0.1;
+const SHARE: f64 = 0.2;
 /// Units of the last place by which a line may miss; the contract allows one.
 const SLACK: f64 = 0.95;
-/// Units of the last place by which a printed result may differ from its value before its operands get finer.
+/// Units of the last place that it owes by which a printed result may differ from its value before its operands get
+/// finer.
 const FARTHEST: f64 = 0.8;
+/// The same for a result that others draw on: part of what they can bear.
+const FARTHEST_WITHIN: f64 = 0.5;
 /// What is smaller than this against the terms it is made of is numerical dust.
 pub(super) const DUST: f64 = 1e-10;
 /// Finest place relative to a quantity's size: double precision holds no more.
@@ -33,15 +37,19 @@ pub fn settle(sheet: &mut Sheet, digits: u8) {
     let mut finer: Vec<i32> = vec![0; sheet.steps.len()];
     let gradients: Vec<Vec<f64>> = sheet.steps.iter().map(|step| gradient(step, &sheet.ledger)).collect();
     for _ in 0..8 {
-        let place = places(sheet, &owed, &finer, &gradients);
+        let (place, bearable) = places(sheet, &owed, &finer, &gradients);
         print(sheet, &owed, &place);
         let mut settled = true;
         for (at, step) in sheet.steps.iter().enumerate() {
             // A utilisation must neither stop short of its value nor overshoot what its operands give.
             let result = sheet.ledger.entry(step.result);
             let short = result.rule == Rule::Up && result.printed.value() < result.in_unit() * (1.0 - 1e-9);
-            let off = (result.printed.value() - result.in_unit()).abs() / result.printed.unit_of_last_place();
-            if short || (off > FARTHEST && result.rule != Rule::Up) || !closes(step, &sheet.ledger) {
+            let off = (result.printed.value() - result.in_unit()).abs();
+            let id = step.result as usize;
+            let own = 10f64.powi(result.printed.place);
+            let farthest =
+                if place[id] == owed[id] { FARTHEST * own } else { FARTHEST_WITHIN * bearable[id] / result.unit.scale };
+            if short || (off > farthest && result.rule != Rule::Up) || !closes(step, &sheet.ledger) {
                 settled = false;
                 finer[at] += 1;
             }
@@ -58,13 +66,16 @@ fn gradient(step: &Step, ledger: &Ledger) -> Vec<f64> {
     step.definition.program().gradient(&values).1
 }
 
-/// The last place of every entry: its own, or a tenth of what its strictest user can bear.
-fn places(sheet: &Sheet, owed: &[i32], finer: &[i32], gradients: &[Vec<f64>]) -> Vec<i32> {
+/// The last place of every entry, and what its strictest user can bear (SI).
+fn places(sheet: &Sheet, owed: &[i32], finer: &[i32], gradients: &[Vec<f64>]) -> (Vec<i32>, Vec<f64>) {
     let entries = sheet.ledger.entries();
     let mut place = owed.to_vec();
     let mut bearable: Vec<f64> =
         owed.iter().zip(entries).map(|(place, entry)| 10f64.powi(*place) * entry.unit.scale).collect();
     for (at, step) in sheet.steps.iter().enumerate().rev() {
+        // Nothing follows from a zero: all of its place may go to the rounding of what it is made of.
+        let result = &entries[step.result as usize];
+        let share = if result.value.abs() <= DUST * result.size { 1.0 } else { 2.0 * SHARE };
         for ((_, id), slope) in step.operands.iter().zip(gradients[at].iter().copied()) {
             let id = *id as usize;
             let entry = &entries[id];
@@ -76,12 +87,12 @@ fn places(sheet: &Sheet, owed: &[i32], finer: &[i32], gradients: &[Vec<f64>]) ->
                 continue;
             }
             bearable[id] = bearable[id].min(may_be_off);
-            let needed = (GUARD * may_be_off / entry.unit.scale).log10().floor() as i32;
+            let needed = (share * may_be_off / entry.unit.scale).log10().floor() as i32;
             let finest = leading(entry.size / entry.unit.scale) - FINEST;
             place[id] = place[id].min(needed.max(finest));
         }
     }
-    place
+    (place, bearable)
 }
 
 /// Prints every entry: inputs and stated values by themselves, results so that their line closes.
