@@ -4,6 +4,7 @@ use super::canvas::{Canvas, Clear, SIZE, along, ink, line};
 use super::number::{bare, number, quantity};
 use super::scene::{Anchor, Dash, Style};
 use super::section::outline;
+use super::text;
 use crate::model::{Display, Section};
 use crate::units::Measure;
 
@@ -39,7 +40,9 @@ const TALL: f64 = 34.0;
 /// Largest width of the outline, mm.
 const WIDE: f64 = 30.0;
 /// Largest stress, mm.
-const LARGEST: f64 = 13.0;
+const LARGEST: f64 = 11.5;
+/// Distance from block to block, mm.
+const PITCH: f64 = 33.0;
 /// Top of the section on paper, mm.
 const TOP: f64 = 16.0;
 
@@ -58,9 +61,8 @@ pub fn depth(display: &Display, depth: &Depth<'_>) -> Option<Figure> {
     let scale = (TALL / whole).min(if width > 0.0 { WIDE / width } else { f64::INFINITY });
     let level = |y: f64| TOP + scale * (top - y);
     outline(&mut canvas, &depth.section.kind.outline(&depth.section.given), &|p| [34.0 + scale * p[0], level(p[1])]);
-    let first = 74.0;
-    let pitch = 35.0;
-    let last = first + pitch * (depth.parts.len().saturating_sub(1)) as f64;
+    let first = 71.0;
+    let last = first + PITCH * (depth.parts.len().saturating_sub(1)) as f64;
     let half = 0.5 * scale * width;
     canvas.line(
         [34.0 - half - 3.0, level(0.0)],
@@ -83,21 +85,20 @@ pub fn depth(display: &Display, depth: &Depth<'_>) -> Option<Figure> {
         canvas.fixed([34.0, y], Anchor::Middle, SIZE, Style::Italic, words);
     }
     for (at, part) in depth.parts.iter().enumerate() {
-        let zero = first + pitch * at as f64;
+        let zero = first + PITCH * at as f64;
         let out = |value: f64| zero + LARGEST * value / largest;
         block(&mut canvas, zero, [level(top), level(-bottom)], part.values.map(out));
         canvas.fixed([zero, TOP - 8.4], Anchor::Middle, SIZE, Style::Bold, &part.words);
-        canvas.fixed([out(part.values[0]), level(top) - 1.6], Anchor::Middle, SIZE, Style::Regular, &part.printed[0]);
-        canvas.fixed(
-            [out(part.values[1]), level(-bottom) + 3.6],
-            Anchor::Middle,
-            SIZE,
-            Style::Regular,
-            &part.printed[1],
-        );
+        for ((value, printed), y) in part.values.iter().zip(&part.printed).zip([level(top) - 1.6, level(-bottom) + 3.6])
+        {
+            // A long number stays between its neighbours.
+            let spare = ((PITCH - text::width(printed, SIZE)) / 2.0 - 0.4).max(0.0);
+            let x = out(*value).clamp(zero - spare, zero + spare);
+            canvas.fixed([x, y], Anchor::Middle, SIZE, Style::Regular, printed);
+        }
         if at + 1 < depth.parts.len() {
             let sign = if at + 2 < depth.parts.len() { "+" } else { "=" };
-            canvas.fixed([zero + pitch / 2.0, TOP - 8.4], Anchor::Middle, SIZE + 2.0, Style::Regular, sign);
+            canvas.fixed([zero + PITCH / 2.0, TOP - 8.4], Anchor::Middle, SIZE + 2.0, Style::Regular, sign);
         }
     }
     let unit = display.unit(Measure::Stress);

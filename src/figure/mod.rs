@@ -2,6 +2,7 @@
 mod canvas;
 mod curve;
 mod depth;
+mod format;
 mod loads;
 mod member;
 mod number;
@@ -11,6 +12,7 @@ mod section;
 mod signs;
 mod structure;
 mod support;
+mod taken;
 mod text;
 mod view;
 
