@@ -172,6 +172,7 @@ impl Solved {
             (drawn.join(), sheet)
         });
         sheet.figures = drawn.unwrap_or_else(|reason| std::panic::resume_unwind(reason));
+        sheet.figures.extend(figures::depth::draw(&self.model, &self.results, &sheet));
         let origin = Origin { name, text, sha256: &self.sha256 };
         let cautions = failure::cautions(&self.model, &self.solution);
         let facts = facts(&self.model, &self.solution, &self.results, &sheet, cautions, origin);

@@ -228,6 +228,12 @@ pub fn compose(model: &Model, solution: &Solution, results: &Results) -> Sheet {
                     largest,
                 );
                 let loads = work::factored(&mut recording, model, combination, &prepared.loads[member_at]);
+                if results.governing[member_at] == at {
+                    let check = silent.checks.iter().find(|c| c.subject == member.name && c.kind == "stress");
+                    if let Some(place) = work::section_of_largest_stress(&extremes, check) {
+                        work::work_depth(&mut recording, member, combination, &member_forces, &place);
+                    }
+                }
                 work::work_bound(&mut recording, member, combination, &loads, &member_forces, &extremes);
                 if results.deflecting[member_at] == Some(at) {
                     work::work_unit_load(&mut recording, member, combination, &loads, &member_forces, &extremes);

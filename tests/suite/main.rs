@@ -1,6 +1,7 @@
 //! The one test binary: published values, promises, diagnostics, packages, commands, tidiness of the house.
 mod commands;
 mod diagnostics;
+mod figures;
 mod independent;
 mod laws;
 mod markdown;
