@@ -314,7 +314,8 @@ fn combination(model: &Model, solution: &Solution, at: usize, sheet: &Sheet) -> 
         .iter()
         .map(|(case, factor)| format!("{factor}·{}", model.cases[*case].name).replace('-', "−"));
     let solved = &solution.combinations[at];
-    let ids: Vec<String> = ["U", "R", "F", "J", "Q", "X", "B"].iter().map(|kind| format!("{name}.{kind}")).collect();
+    let ids: Vec<String> =
+        ["U", "D", "R", "F", "J", "Q", "X", "B"].iter().map(|kind| format!("{name}.{kind}")).collect();
     let drawings: Vec<String> =
         ["deflected", "N", "V", "M", "buckling"].iter().map(|kind| format!("{name}.{kind}")).collect();
     CombinationFacts {
