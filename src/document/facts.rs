@@ -375,5 +375,9 @@ facts! {
         validated: Vec<String>,
         /// Features this input uses that no validation case covers: one line each.
         uncovered: Vec<String>,
+        /// How many steps the package holds.
+        steps: String,
+        /// How many of its tables have an id.
+        tables: String,
     }
 }

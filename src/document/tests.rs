@@ -143,7 +143,13 @@ fn full(said: &str) -> Facts {
         sample: vec![SampleFact { address: text("BC.C1.E01"), what: said(), why: text("governs") }],
         left_out: vec![LeftOutFact { node: text("B"), direction: text("rotation") }],
         input: InputFacts { name: said(), sha256: text("0badc0de"), text: said() },
-        program: ProgramFacts { version: text("0.1.0"), validated: vec![text("one")], uncovered: vec![text("two")] },
+        program: ProgramFacts {
+            version: text("0.1.0"),
+            validated: vec![text("one")],
+            uncovered: vec![text("two")],
+            steps: text("133"),
+            tables: text("26"),
+        },
     }
 }
 

@@ -1,7 +1,7 @@
 //! The comparison with limits and the sampling list, as the templates see them.
 use crate::document::{CheckFacts, CheckRow, Group, MatrixRow, SampleFact};
 use crate::model::{Combination, DeflectionCheck, MemberKind, Model, Purpose};
-use crate::sheet::{Results, Sheet, ratio_text, sorted_checks};
+use crate::sheet::{Results, Sheet, Step, ratio_text, sorted_checks};
 use crate::units::Measure;
 use crate::work::Check;
 use std::collections::BTreeSet;
@@ -173,6 +173,15 @@ fn groups(model: &Model, sheet: &Sheet) -> Vec<Group> {
     overview.into_iter().chain(of_steps).collect()
 }
 
+/// Words, symbol and method of a step: what `retrace` holds every step of the package against.
+fn what_it_is(step: &Step) -> String {
+    let (title, symbol) = (step.definition.title(), step.definition.symbol());
+    match step.methods().join(" · ") {
+        by if by.is_empty() => format!("{title}, {symbol}"),
+        by => format!("{title}, {symbol} ({by})"),
+    }
+}
+
 /// What the checker should confirm at least, chosen by rule and not by the originator.
 ///
 /// All governing comparisons, each distinct formula once, everything above 0.8, and a tenth of the rest drawn by the
@@ -184,7 +193,7 @@ pub(super) fn sample(results: &Results, sheet: &Sheet, sha256: &str) -> Vec<Samp
         if let Some(step) = sheet.step(number)
             && seen.insert(number.to_owned())
         {
-            let what = step.definition.title().to_owned();
+            let what = what_it_is(step);
             chosen.push(SampleFact { address: number.to_owned(), what, why: why.to_owned() });
         }
     };
@@ -200,12 +209,12 @@ pub(super) fn sample(results: &Results, sheet: &Sheet, sha256: &str) -> Vec<Samp
     let mut formulas = BTreeSet::new();
     for step in &sheet.steps {
         let letter = step.number.rsplit('.').next().and_then(|last| last.chars().next()).unwrap_or(' ');
-        let shape = match letter {
+        let formula = match letter {
             // Balances differ in their number of terms alone.
-            'N' | 'R' => format!("{letter}{}", step.definition.symbol()),
-            _ => format!("{} = {}", step.definition.symbol(), crate::formula::with_symbols(step.definition.tree())),
+            'N' | 'R' => String::new(),
+            _ => crate::formula::with_symbols(step.definition.tree()),
         };
-        if formulas.insert(shape) {
+        if formulas.insert((what_it_is(step), formula)) {
             add(&step.number, "first use of this formula");
         }
     }

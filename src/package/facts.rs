@@ -88,6 +88,8 @@ pub fn facts(
             version: env!("CARGO_PKG_VERSION").into(),
             validated: super::validation::COVERED.iter().map(|line| (*line).to_owned()).collect(),
             uncovered: super::validation::uncovered(model),
+            steps: sheet.steps.len().to_string(),
+            tables: sheet.tables.len().to_string(),
         },
     }
 }
