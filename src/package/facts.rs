@@ -31,6 +31,7 @@ pub fn facts(
     origin: Origin<'_>,
 ) -> Facts {
     let steps = Index::new(sheet);
+    let (sample, sample_rest) = comparisons::sample(results, sheet, origin.sha256);
     Facts {
         project: project(&model.project),
         display: DisplayFacts {
@@ -69,7 +70,9 @@ pub fn facts(
             .collect(),
         member_sheets: member_sheets(model, results, sheet, &steps),
         second_answers: second_answers(model, results, sheet, &steps),
-        sample: comparisons::sample(results, sheet, origin.sha256),
+        sample,
+        sample_rest,
+        symbols: super::symbols::facts(&model.display, sheet),
         left_out: solution
             .left_out
             .iter()

@@ -6,6 +6,7 @@ mod independent;
 mod laws;
 mod markdown;
 mod packages;
+mod pages;
 mod promises;
 mod published;
 mod readme;
