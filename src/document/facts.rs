@@ -39,8 +39,10 @@ facts! {
         sample: Vec<SampleFact>,
         /// What it chose besides: each kind of formula once, and a draw from the rest.
         sample_rest: Vec<SampleGroup>,
-        /// Every symbol of a formula, by name.
+        /// Every symbol that a step finds, by name, with the first step of each kind.
         symbols: Vec<SymbolFact>,
+        /// Every other symbol of the formulas, by name.
+        read_symbols: Vec<SymbolFact>,
         /// Directions that nothing stiffens and nothing loads.
         left_out: Vec<LeftOutFact>,
         /// The input file.
@@ -371,14 +373,14 @@ facts! {
 
     /// A symbol of the formulas.
     SymbolFact {
+        /// The first step that finds it; empty where it is read from a table.
+        address: String,
         /// As it stands in formulas.
         symbol: String,
-        /// What it stands for.
+        /// What it stands for; of a step words, symbol and method, as `retrace` holds them against it.
         meaning: String,
         /// The units of its numbers, such as `mm`; empty where it has none.
         unit: String,
-        /// Letter and figure of the steps that find it, such as `E03`; empty where it is read from tables.
-        found: String,
     }
 
     /// A direction that nothing stiffens and nothing loads.
@@ -407,5 +409,9 @@ facts! {
         validated: Vec<String>,
         /// Features this input uses that no validation case covers: one line each.
         uncovered: Vec<String>,
+        /// How many steps the package holds.
+        steps: String,
+        /// How many of its tables have an id.
+        tables: String,
     }
 }

@@ -145,10 +145,22 @@ fn full(said: &str) -> Facts {
             why: text("First use"),
             subjects: vec![SampleSubject { subject: text("BC.C1"), steps: vec![text("BC.C1.E01")] }],
         }],
-        symbols: vec![SymbolFact { symbol: text("κ_u1"), meaning: said(), unit: text("1/m"), found: text("E03") }],
+        symbols: vec![SymbolFact {
+            address: text("BC.C1.E03"),
+            symbol: text("κ_u1"),
+            meaning: said(),
+            unit: text("1/m"),
+        }],
+        read_symbols: vec![SymbolFact { symbol: text("E"), meaning: said(), ..SymbolFact::default() }],
         left_out: vec![LeftOutFact { node: text("B"), direction: text("rotation") }],
         input: InputFacts { name: said(), sha256: text("0badc0de"), text: said() },
-        program: ProgramFacts { version: text("0.1.0"), validated: vec![text("one")], uncovered: vec![text("two")] },
+        program: ProgramFacts {
+            version: text("0.1.0"),
+            validated: vec![text("one")],
+            uncovered: vec![text("two")],
+            steps: text("133"),
+            tables: text("26"),
+        },
     }
 }
 

@@ -159,8 +159,17 @@ impl Program {
                 Op::Power(a, n) => give(a, w * f64::from(n) * of(a).powi(i32::from(n) - 1)),
                 Op::Root(a) => give(a, if results[at] > 0.0 { w / (2.0 * results[at]) } else { 0.0 }),
                 Op::Absolute(a) => give(a, w * of(a).signum()),
-                Op::Max(a, b) => give(if of(a) >= of(b) { a } else { b }, w),
-                Op::Min(a, b) => give(if of(a) <= of(b) { a } else { b }, w),
+                Op::Max(a, b) | Op::Min(a, b) => {
+                    // What is nearly as large (or small) can take over with the rounding of either: both count.
+                    let near = (of(a) - of(b)).abs() <= NEAR * of(a).abs().max(of(b).abs());
+                    let first = (of(a) >= of(b)) == matches!(op, Op::Max(..));
+                    if near || first {
+                        give(a, w);
+                    }
+                    if near || !first {
+                        give(b, w);
+                    }
+                }
                 Op::Sine(a) => give(a, w * of(a).cos()),
                 Op::Cosine(a) => give(a, -w * of(a).sin()),
                 Op::Tangent(a) => give(a, w / of(a).cos().powi(2)),
@@ -170,6 +179,9 @@ impl Program {
         (value, by_slot)
     }
 }
+
+/// Part of a value within which another is nearly as large.
+const NEAR: f64 = 0.01;
 
 #[cfg(test)]
 mod tests {

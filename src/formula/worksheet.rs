@@ -154,6 +154,19 @@ impl<'a> Scope<'a> {
         self.sheet.compare(number, definition, &operands, limit)
     }
 
+    /// What a definition whose symbols are all known gives, SI; nothing is written down.
+    #[must_use]
+    pub fn glance(&self, definition: &Definition) -> f64 {
+        let values: Vec<f64> = self.operands(definition).iter().map(|v| v.si).collect();
+        definition.program().evaluate(&values)
+    }
+
+    /// The subject and the combination that steps are numbered by.
+    #[must_use]
+    pub const fn about(&self) -> (&'a str, Option<&'a str>) {
+        (self.subject, self.combination)
+    }
+
     fn operands(&self, definition: &Definition) -> Vec<Value> {
         definition.program().symbols().iter().map(|s| self.get(s).unwrap_or(Value::silent(f64::NAN))).collect()
     }

@@ -1,4 +1,5 @@
 //! The comparison with limits and the sampling list, as the templates see them.
+use super::symbols::what_it_is;
 use crate::document::{CheckFacts, CheckRow, Group, MatrixRow, SampleFact, SampleGroup, SampleSubject};
 use crate::model::{Combination, DeflectionCheck, MemberKind, Model, Purpose};
 use crate::sheet::{Results, Sheet, Step, ratio_text, sorted_checks};
@@ -191,19 +192,19 @@ pub(super) fn sample(results: &Results, sheet: &Sheet, sha256: &str) -> (Vec<Sam
             continue;
         };
         if seen.insert(step.number.as_str()) {
-            let what = step.definition.title().to_owned();
+            let what = what_it_is(step);
             chosen.push(SampleFact { address: step.number.clone(), what, why: why.to_owned() });
         }
     }
     let mut formulas = BTreeSet::new();
     let first = |step: &&Step| {
         let letter = step.number.rsplit('.').next().and_then(|last| last.chars().next()).unwrap_or(' ');
-        let shape = match letter {
+        let formula = match letter {
             // Balances differ in their number of terms alone.
-            'N' | 'R' => format!("{letter}{}", step.definition.symbol()),
-            _ => format!("{} = {}", step.definition.symbol(), crate::formula::with_symbols(step.definition.tree())),
+            'N' | 'R' => String::new(),
+            _ => crate::formula::with_symbols(step.definition.tree()),
         };
-        formulas.insert(shape)
+        formulas.insert((what_it_is(step), formula))
     };
     let firsts: Vec<&Step> =
         sheet.steps.iter().filter(first).filter(|step| seen.insert(step.number.as_str())).collect();

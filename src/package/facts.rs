@@ -31,6 +31,7 @@ pub fn facts(
     origin: Origin<'_>,
 ) -> Facts {
     let steps = Index::new(sheet);
+    let (symbols, read_symbols) = super::symbols::facts(&model.display, sheet);
     let (sample, sample_rest) = comparisons::sample(results, sheet, origin.sha256);
     Facts {
         project: project(&model.project),
@@ -72,7 +73,8 @@ pub fn facts(
         second_answers: second_answers(model, results, sheet, &steps),
         sample,
         sample_rest,
-        symbols: super::symbols::facts(&model.display, sheet),
+        symbols,
+        read_symbols,
         left_out: solution
             .left_out
             .iter()
@@ -91,6 +93,8 @@ pub fn facts(
             version: env!("CARGO_PKG_VERSION").into(),
             validated: super::validation::COVERED.iter().map(|line| (*line).to_owned()).collect(),
             uncovered: super::validation::uncovered(model),
+            steps: sheet.steps.len().to_string(),
+            tables: sheet.tables.len().to_string(),
         },
     }
 }
@@ -318,7 +322,8 @@ fn combination(model: &Model, solution: &Solution, at: usize, sheet: &Sheet) -> 
         .iter()
         .map(|(case, factor)| format!("{factor}·{}", model.cases[*case].name).replace('-', "−"));
     let solved = &solution.combinations[at];
-    let ids: Vec<String> = ["U", "R", "F", "J", "Q", "X", "B"].iter().map(|kind| format!("{name}.{kind}")).collect();
+    let ids: Vec<String> =
+        ["U", "D", "R", "F", "J", "Q", "X", "B"].iter().map(|kind| format!("{name}.{kind}")).collect();
     let drawings: Vec<String> =
         ["deflected", "N", "V", "M", "buckling"].iter().map(|kind| format!("{name}.{kind}")).collect();
     CombinationFacts {

@@ -1,63 +1,66 @@
-//! The index of symbols: what each stands for, its unit, the steps that find it.
+//! The index of symbols: what each stands for, its unit, the first step that finds it.
 use crate::catalogue::{check, section, symbol};
 use crate::document::SymbolFact;
-use crate::formula::Symbol;
 use crate::model::Display;
 use crate::sheet::{Sheet, Step};
 use std::collections::{BTreeMap, BTreeSet};
 
-/// What is known of a symbol in one unit.
-#[derive(Default)]
-struct Known<'s> {
-    /// Letter and figure of the steps that find it.
-    found: BTreeSet<(char, u16)>,
-    /// The words of the first of them.
-    title: Option<((char, u16), &'s str)>,
+/// Words, symbol and method of a step: what `retrace` holds every step of the package against.
+pub(super) fn what_it_is(step: &Step) -> String {
+    let (title, symbol) = (step.definition.title(), step.definition.symbol());
+    match step.methods().join(" · ") {
+        by if by.is_empty() => format!("{title}, {symbol}"),
+        by => format!("{title}, {symbol} ({by})"),
+    }
 }
 
-/// Every symbol of every formula; symbols that differ in a running index alone stand together.
-pub(super) fn facts(display: &Display, sheet: &Sheet) -> Vec<SymbolFact> {
-    let mut all: BTreeMap<(String, String), Known<'_>> = BTreeMap::new();
+/// Every symbol that a step finds, once for each thing it stands for, and every other symbol of the formulas.
+///
+/// Symbols that differ in a running index alone stand together.
+pub(super) fn facts(display: &Display, sheet: &Sheet) -> (Vec<SymbolFact>, Vec<SymbolFact>) {
+    let mut found: BTreeMap<Order, SymbolFact> = BTreeMap::new();
+    let mut read: BTreeMap<Order, SymbolFact> = BTreeMap::new();
+    let unit = |id: u32| sheet.ledger.entry(id).unit.text.to_string();
+    let results: BTreeSet<(&str, String)> =
+        sheet.steps.iter().map(|step| (step.definition.symbol().as_str(), unit(step.result))).collect();
     for step in &sheet.steps {
-        let unit = |id: u32| sheet.ledger.entry(id).unit.text.to_string();
-        let known = all.entry((step.definition.symbol().to_string(), unit(step.result))).or_default();
-        if let Some(place) = place(step) {
-            known.found.insert(place);
-            if known.title.is_none_or(|(before, _)| place < before) {
-                known.title = Some((place, step.definition.title()));
-            }
-        }
-        for (symbol, id) in &step.operands {
-            all.entry((symbol.to_string(), unit(*id))).or_default();
-        }
-    }
-    let mut rows: BTreeMap<(bool, String, String, String), SymbolFact> = BTreeMap::new();
-    for ((text, unit), known) in all {
-        let symbol = Symbol::owned(text.clone());
-        let said = meaning(display, &text, &unit).or(known.title.map(|(_, words)| words));
-        let running = symbol.subscript().chars().all(|c| c.is_ascii_digit()) && !symbol.subscript().is_empty();
-        let (text, meaning) = match said {
-            Some(words) => (text, words),
-            None if running => (format!("{0}₁, {0}₂ …", symbol.stem()), family(symbol.stem())),
-            None => (text, "Value that its step names"),
-        };
-        let found: Vec<String> = known.found.iter().map(|(letter, nn)| format!("{letter}{nn:02}")).collect();
-        let greek = text.starts_with(|c: char| !c.is_ascii());
-        rows.entry((greek, text.to_lowercase(), text.clone(), unit.clone())).or_insert(SymbolFact {
-            symbol: text,
-            meaning: meaning.trim_end_matches('.').to_owned(),
-            unit,
-            found: shortened(&found),
+        let symbol = step.definition.symbol().to_string();
+        let what = what_it_is(step);
+        found.entry(order(&symbol, &what)).or_insert_with(|| SymbolFact {
+            address: step.number.clone(),
+            symbol,
+            meaning: what,
+            unit: unit(step.result),
         });
+        for (symbol, id) in &step.operands {
+            let unit = unit(*id);
+            if results.contains(&(symbol.as_str(), unit.clone())) {
+                continue;
+            }
+            let running = !symbol.subscript().is_empty() && symbol.subscript().chars().all(|c| c.is_ascii_digit());
+            let (text, meaning) = match meaning(display, symbol.as_str(), &unit) {
+                Some(words) => (symbol.to_string(), words),
+                None if running => (format!("{0}₁, {0}₂ …", symbol.stem()), family(symbol.stem())),
+                None => (symbol.to_string(), "Value that its step names"),
+            };
+            let meaning = meaning.trim_end_matches('.').to_owned();
+            read.entry(order(&text, &unit)).or_insert(SymbolFact {
+                address: String::new(),
+                symbol: text,
+                meaning,
+                unit,
+            });
+        }
     }
-    rows.into_values().collect()
+    (found.into_values().collect(), read.into_values().collect())
 }
 
-/// Letter and figure of a step's number.
-fn place(step: &Step) -> Option<(char, u16)> {
-    let last = step.number.rsplit('.').next()?;
-    let letter = last.chars().next()?;
-    Some((letter, last[letter.len_utf8()..].parse().ok()?))
+/// Latin before Greek, capitals beside small letters; what else tells two apart comes last.
+type Order = (bool, String, String, String);
+
+fn order(symbol: &str, other: &str) -> Order {
+    let greek = symbol.starts_with(|c: char| !c.is_ascii());
+    (greek, symbol.to_lowercase(), symbol.to_owned(), other.to_owned())
 }
 
 /// The words of the tables of symbols and of the sections' dimensions.
@@ -77,15 +80,5 @@ fn family(stem: &str) -> &'static str {
     match stem {
         "γ" => "Factors of the combination on the load cases",
         _ => "Terms of one sum, each named in its step",
-    }
-}
-
-/// The first few, and how the rest is said.
-fn shortened(found: &[String]) -> String {
-    const MOST: usize = 4;
-    match found {
-        [] => String::new(),
-        few if few.len() <= MOST => few.join(", "),
-        many => format!("{} …", many[..MOST].join(", ")),
     }
 }

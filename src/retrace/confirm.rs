@@ -2,7 +2,7 @@
 use super::package::Package;
 use super::report::{Coverage, Report};
 use super::trace::Addresses;
-use super::{closing, fingerprint, naming, quote, verdict};
+use super::{closing, fingerprint, listed, naming, quote, verdict};
 use std::collections::BTreeSet;
 
 /// Confirms every line of a package; with the input at hand also that the package belongs to it.
@@ -29,6 +29,7 @@ pub fn confirm(package: &Package, input: Option<&str>) -> Report {
     }
     addresses.chains(&mut findings, &mut coverage);
     let mut confirmed = addresses.drawn_cells().clone();
+    listed::check(package, &mut findings);
     naming::check_symbols(package, &mut findings);
     naming::check_combinations(package, &mut findings);
     naming::check_cells(package, &mut confirmed, &mut findings);

@@ -10,6 +10,7 @@ mod closing;
 mod confirm;
 mod evaluate;
 mod fingerprint;
+mod listed;
 mod markdown;
 mod naming;
 mod package;

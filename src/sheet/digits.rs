@@ -49,6 +49,11 @@ pub fn settle(sheet: &mut Sheet, digits: u8) {
             let own = 10f64.powi(result.printed.place);
             let farthest =
                 if place[id] == owed[id] { FARTHEST * own } else { FARTHEST_WITHIN * bearable[id] / result.unit.scale };
+            // Where all operands are typed or shared nothing gets finer.
+            let fixed = |(_, id): &(_, u32)| matches!(sheet.ledger.entry(*id).rule, Rule::Typed | Rule::Shared);
+            if step.operands.iter().all(fixed) {
+                continue;
+            }
             if short || (off > farthest && result.rule != Rule::Up) || !closes(step, &sheet.ledger) {
                 settled = false;
                 finer[at] += 1;

@@ -6,6 +6,11 @@ use crate::model::Display;
 use crate::units::{Measure, Unit};
 use std::fmt;
 
+/// Part of its terms below which a result is their small difference: it owes digits of that part, not of itself.
+const DIFFERENCE: f64 = 1e-2;
+/// The same of movements, whose small differences are what strains come from.
+const DIFFERENCE_OF_MOVEMENTS: f64 = 1e-3;
+
 /// A worksheet over a sheet.
 pub struct Recording<'a> {
     /// Where steps go.
@@ -42,17 +47,23 @@ impl<'a> Recording<'a> {
         let (value, gradient) = definition.program().gradient(&values);
         let size: f64 =
             gradient.iter().zip(operands).map(|(slope, v)| (slope * self.sheet.ledger.entry(v.id).size).abs()).sum();
+        let of_movements = number.letter == 'D';
+        let least = size * if of_movements { DIFFERENCE_OF_MOVEMENTS } else { DIFFERENCE };
         let rule = rule.unwrap_or(if value.abs() <= DUST * size {
             Rule::OwedOf(size)
         } else if number.letter == 'P' {
             Rule::Shared
+        } else if value.abs() < least {
+            Rule::OwedOf(least)
         } else {
             Rule::Owed
         });
-        let rule = if rule == Rule::OwedOf(0.0) { Rule::OwedOf(size) } else { rule };
+        let rule = if rule == Rule::OwedOf(0.0) { Rule::OwedOf(if of_movements { least } else { size }) } else { rule };
         let result = self.sheet.ledger.enter(address.clone(), value, self.display.unit(definition.measure()), rule);
-        if let Rule::OwedOf(size) = rule {
+        if of_movements {
             self.sheet.ledger.entry_mut(result.id).size = size;
+        } else if let Rule::OwedOf(owed) = rule {
+            self.sheet.ledger.entry_mut(result.id).size = owed;
         }
         let symbols = definition.program().symbols();
         let operands = symbols.iter().cloned().zip(operands.iter().map(|v| v.id)).collect();

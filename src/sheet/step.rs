@@ -20,6 +20,14 @@ pub struct Step {
     pub note: Option<String>,
 }
 
+impl Step {
+    /// The published source of the formula, then the method or clause of the step; empty where neither is stated.
+    #[must_use]
+    pub fn methods(&self) -> Vec<&str> {
+        self.definition.source().map(|source| source.short).into_iter().chain(self.by.as_deref()).collect()
+    }
+}
+
 /// What a result is compared with.
 #[derive(Debug, Clone, Copy, PartialEq)]
 pub struct Comparison {

@@ -279,10 +279,9 @@ pub(super) fn labelled(label: &str, text: &Paragraph, setter: &mut Setter<'_>, g
     slabs
 }
 
-/// The published source of the formula, then the method or clause of the step.
+/// Source and method of a step in one line.
 fn by(step: &Step) -> Option<String> {
-    let source = step.definition.source().map(|source| source.short);
-    let by: Vec<&str> = source.into_iter().chain(step.by.as_deref()).collect();
+    let by = step.methods();
     (!by.is_empty()).then(|| by.join("; "))
 }
 

@@ -1,5 +1,6 @@
 //! One member under one combination: movements, strain, stress, end force (steps L, D, E, S, F).
 use super::factor::times_factor;
+use super::relative;
 use super::{CaseLoad, MemberBase};
 use crate::catalogue::element::{bar, bar3, bending, joint, movement};
 use crate::catalogue::symbol::*;
@@ -120,20 +121,20 @@ impl Chain<'_> {
         self.step('D', 1, &movement::RELATIVE_X);
         self.step('D', 2, &movement::RELATIVE_Y);
         if self.stretches() {
-            self.out.elongation = Some(self.step('D', 3, &movement::ELONGATION));
+            self.out.elongation = Some(relative::ELONGATION.work(&mut self.scope));
         }
         if self.bends() {
             self.step('D', 4, &movement::CROSS_MOVEMENT);
             self.step('D', 5, &movement::CHORD_ROTATION);
-            self.out.start_rotation = Some(self.step('D', 6, &movement::START_ROTATION));
-            self.step('D', 7, &movement::END_ROTATION);
+            self.out.start_rotation = Some(relative::START_ROTATION.work(&mut self.scope));
+            relative::END_ROTATION.work(&mut self.scope);
         }
         if let (MemberKind::Bar3, Some([x, y])) = (self.kind, middle) {
             self.scope.set(&XUM, x);
             self.scope.set(&YUM, y);
             self.step('D', 8, &movement::MIDDLE_X);
             self.step('D', 9, &movement::MIDDLE_Y);
-            self.step('D', 10, &movement::MIDDLE_MOVEMENT);
+            relative::MIDDLE_MOVEMENT.work(&mut self.scope);
         }
     }
 

@@ -10,6 +10,7 @@ mod loads;
 mod member;
 mod movement;
 mod node;
+mod relative;
 mod second;
 mod structure;
 mod unit;
@@ -27,6 +28,7 @@ pub use loads::{CaseLoad, load_inputs, work_case_loads};
 pub use member::{MemberBase, SectionValues, work_base};
 pub use movement::movements;
 pub use node::{AllLoads, NodeBalance, node_load, work_node};
+pub use relative::relative_movements;
 pub use second::{
     Energy, SUPPORTS, energy, support_share, virtual_work, work_bound, work_energy, work_unit_load, work_virtual,
 };

@@ -1,5 +1,6 @@
 //! The one test binary: published values, promises, diagnostics, packages, commands, tidiness of the house.
 mod commands;
+mod damage;
 mod diagnostics;
 mod figures;
 mod independent;

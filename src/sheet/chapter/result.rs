@@ -5,7 +5,7 @@ use crate::formula::{Value, Worksheet};
 use crate::model::{MemberKind, Model};
 use crate::sheet::{Recording, Results, Table, VirtualMovement, is_worked};
 use crate::units::Measure as M;
-use crate::work::{CombinationWork, node_movement};
+use crate::work::{CombinationWork, node_movement, relative_movements};
 
 /// Every table of results.
 pub(super) fn tables(
@@ -18,6 +18,7 @@ pub(super) fn tables(
     let mut tables = Vec::new();
     for (at, work) in worked.iter().enumerate() {
         tables.push(movements(model, solution, at, sheet));
+        tables.push(relative(model, at, sheet));
         tables.push(reactions(model, at, work, sheet));
         tables.push(end_forces(model, at, work, sheet));
         tables.push(joint_forces(model, at, work, sheet));
@@ -58,6 +59,25 @@ fn movements(model: &Model, solution: &Solution, at: usize, sheet: &mut Recordin
         }
         if let Some([x, y]) = moved.middle {
             table.row(format!("{}.middle", member.name), vec![Cell::Quantity(x.id), Cell::Quantity(y.id), Cell::Empty]);
+        }
+    }
+    table.build(sheet)
+}
+
+/// Relative movements that are stated beside the movements of the nodes.
+fn relative(model: &Model, at: usize, sheet: &Recording<'_>) -> Option<Table> {
+    let name = &model.combinations[at].name;
+    let title = format!("Movements relative to start and chord, combination {name}");
+    let mut table = Builder::new(format!("{name}.D"), title, "member").note(
+        "Stated where they are the small difference of large movements. Each step D13 to D20 shows that the movements of the nodes leave no gap in their last printed place; strain, end force and balance prove the further digits.",
+    );
+    for (column, measure, _) in relative_movements(name, "") {
+        table = table.column(column, measure);
+    }
+    for member in &model.members {
+        let values = relative_movements(name, &member.name).map(|(.., address)| sheet.sheet.ledger.at(&address));
+        if values.iter().any(Option::is_some) {
+            table.row(&member.name, values.map(quantity).to_vec());
         }
     }
     table.build(sheet)

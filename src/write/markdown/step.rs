@@ -26,7 +26,7 @@ pub(super) fn write(step: &Step, ledger: &Ledger) -> String {
         let operands = step.operands.iter().map(|(symbol, id)| format!("{symbol} {}", ledger.entry(*id).address));
         lines.push(format!("from: {}", operands.collect::<Vec<_>>().join(" · ")));
     }
-    let by: Vec<&str> = definition.source().map(|source| source.short).into_iter().chain(step.by.as_deref()).collect();
+    let by = step.methods();
     if !by.is_empty() {
         lines.push(format!("by: {}", line(&by.join(" · "))));
     }
