@@ -43,8 +43,9 @@ pub(super) fn fitting(draw: impl Fn(Format) -> Figure) -> Figure {
         }
         let figure = draw(format);
         hopeless = figure.scene.keyed > MANY;
-        let enough = figure.scene.keyed * FEW <= figure.scene.labels;
-        if best.as_ref().is_none_or(|before| figure.scene.keyed < before.scene.keyed) {
+        let enough = figure.scene.keyed * FEW <= figure.scene.labels && figure.scene.lost == 0;
+        let without = |figure: &Figure| (figure.scene.lost, figure.scene.keyed);
+        if best.as_ref().is_none_or(|before| without(&figure) < without(before)) {
             best = Some(figure);
         }
         if enough {
