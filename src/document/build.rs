@@ -13,7 +13,7 @@ use minijinja::{AutoEscape, Environment, Error, ErrorKind, Output, State, Undefi
 ///
 /// In templates every value is escaped, so that text from the input stands as typed and on one line.
 /// `{{ text|prose }}` lets text from the input keep its paragraphs, lists and emphasis; `{{ number|link }}` prints
-/// the address of a step or a table as a link to it. The module `marks` lists the marks that stand for what is no text.
+/// the address of a step or a table as a link to it, `{{ number|short_link }}` the last part of a step's number. The module `marks` lists the marks that stand for what is no text.
 ///
 /// # Errors
 /// A template that is missing, cannot be parsed, names a fact that does not exist, or prints what cannot be read.
@@ -55,6 +55,7 @@ fn environment(templates: &Templates) -> Result<Environment<'static>, TemplateFa
     environment.set_formatter(print);
     environment.add_filter("prose", |text: String| Value::from_safe_string(token::prose(&text)));
     environment.add_filter("link", |to: String| Value::from_safe_string(token::link(&to)));
+    environment.add_filter("short_link", |to: String| Value::from_safe_string(token::short(&to)));
     for (name, text) in templates.iter().filter(|(name, _)| !name.starts_with(ORDER)) {
         environment
             .add_template_owned(name.to_string(), text.to_string())

@@ -198,22 +198,22 @@ impl Canvas {
             }
         }
         let keyed = without.len();
-        let mut lost = keyed > KEY;
-        if !lost {
+        let mut lost = if keyed > KEY { keyed } else { 0 };
+        if lost == 0 {
             for (at, label) in without.into_iter().enumerate() {
                 let mark = format!("({})", at + 1);
                 let wish = Wish { far: true, ..label.wish };
                 if self.place(&wish, &mark, Style::Bold, &sheet) {
                     self.notes.push(format!("{mark} {}", label.text));
                 } else {
-                    lost = true;
+                    lost += 1;
                 }
             }
         }
-        if lost {
+        if lost > 0 {
             self.notes.push(std::mem::take(&mut self.elsewhere));
         }
-        Scene { labels, keyed, ..self.close() }
+        Scene { labels, keyed, lost, ..self.close() }
     }
 
     /// Writes a label where there is room for it; whether there was.

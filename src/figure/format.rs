@@ -30,13 +30,22 @@ const FORMATS: [Format; 4] = [
 /// Of one label in so many it is no matter that it stands in the key.
 const FEW: usize = 16;
 
+/// Labels without room that no format but the last could bring near.
+const MANY: usize = 400;
+
 /// Draws in the smallest format in which nearly every label finds room; else in the one in which most do.
 pub(super) fn fitting(draw: impl Fn(Format) -> Figure) -> Figure {
     let mut best: Option<Figure> = None;
-    for format in FORMATS {
+    let mut hopeless = false;
+    for (at, format) in FORMATS.into_iter().enumerate() {
+        if hopeless && at + 1 < FORMATS.len() {
+            continue;
+        }
         let figure = draw(format);
-        let enough = figure.scene.keyed * FEW <= figure.scene.labels;
-        if best.as_ref().is_none_or(|before| figure.scene.keyed < before.scene.keyed) {
+        hopeless = figure.scene.keyed > MANY;
+        let enough = figure.scene.keyed * FEW <= figure.scene.labels && figure.scene.lost == 0;
+        let without = |figure: &Figure| (figure.scene.lost, figure.scene.keyed);
+        if best.as_ref().is_none_or(|before| without(&figure) < without(before)) {
             best = Some(figure);
         }
         if enough {

@@ -13,6 +13,8 @@ pub struct Scene {
     pub labels: usize,
     /// Those of them that found none and stand in the key below, or elsewhere.
     pub keyed: usize,
+    /// Those of them that have no number in the drawing either.
+    pub lost: usize,
 }
 
 /// One thing drawn.

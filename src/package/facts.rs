@@ -31,6 +31,8 @@ pub fn facts(
     origin: Origin<'_>,
 ) -> Facts {
     let steps = Index::new(sheet);
+    let (symbols, read_symbols) = super::symbols::facts(&model.display, sheet);
+    let (sample, sample_rest) = comparisons::sample(results, sheet, origin.sha256);
     Facts {
         project: project(&model.project),
         display: DisplayFacts {
@@ -69,7 +71,10 @@ pub fn facts(
             .collect(),
         member_sheets: member_sheets(model, results, sheet, &steps),
         second_answers: second_answers(model, results, sheet, &steps),
-        sample: comparisons::sample(results, sheet, origin.sha256),
+        sample,
+        sample_rest,
+        symbols,
+        read_symbols,
         left_out: solution
             .left_out
             .iter()

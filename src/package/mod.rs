@@ -3,6 +3,7 @@ mod comparisons;
 mod facts;
 mod failure;
 mod figures;
+mod symbols;
 mod validation;
 
 pub use facts::{Origin, facts};

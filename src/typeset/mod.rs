@@ -15,6 +15,7 @@ mod step;
 mod symbols;
 mod table;
 mod text;
+mod uses;
 
 pub use font::{Constants, Face, FaceName, Fonts, Growth, MathFont, Part};
 pub use frame::{Anchor, Frame, Glyph, Item, Link, Path, Rule, Run, Slot};
@@ -81,7 +82,8 @@ pub fn typeset(document: &Document, sheet: &Sheet, paper: Paper, fonts: &Fonts) 
     let geometry = Geometry::of(paper);
     let mut setter = Setter::new(fonts);
     let mut flow = Flow::new(geometry);
-    let column = Column { left: geometry.text, geometry: &geometry, sheet, document };
+    let uses = uses::Uses::of(sheet);
+    let column = Column { left: geometry.text, geometry: &geometry, sheet, document, uses: &uses };
     // Blocks are set by themselves, side by side, and poured on to the sheets in order.
     let parts = document.blocks.len().div_ceil(BLOCKS);
     let set = side_by_side(

@@ -191,17 +191,17 @@ impl Seeker<'_, '_> {
 
     fn moment(&mut self) -> Extreme {
         let peak = self.field.peak(Quantity::M, f64::abs);
-        self.at_place(&peak, Quantity::M, base::MOMENT, &Symbol::new("x_M"), true)
+        self.at_place(&peak, Quantity::M, base::MOMENT, &XM, true)
     }
 
     fn shear(&mut self) -> Extreme {
         let peak = self.field.peak(Quantity::V, f64::abs);
-        self.at_place(&peak, Quantity::V, base::SHEAR, &Symbol::new("x_V"), false)
+        self.at_place(&peak, Quantity::V, base::SHEAR, &XV, false)
     }
 
     fn axial(&mut self) -> Extreme {
         let peak = self.field.peak(Quantity::N, |n| -n);
-        self.at_place(&peak, Quantity::N, base::AXIAL, &Symbol::new("x_N"), false)
+        self.at_place(&peak, Quantity::N, base::AXIAL, &XN, false)
     }
 
     fn at_place(&mut self, peak: &Peak, quantity: Quantity, nn: u16, symbol: &Symbol, zero_shear: bool) -> Extreme {
@@ -230,7 +230,7 @@ impl Seeker<'_, '_> {
         if self.end(peak.x).is_some() {
             return Extreme::plain(0.0, Value::silent(0.0));
         }
-        let at = self.place(&Symbol::new("x_v"), &peak, base::DEFLECTION, false);
+        let at = self.place(&XDEF, &peak, base::DEFLECTION, false);
         self.deflection_place = self.scope.get(&at.symbol);
         let slope = self.field.at_slope(at.x);
         if slope {
@@ -265,7 +265,7 @@ impl Seeker<'_, '_> {
             let (axial, moment) = (self.forces.n[end], self.forces.m[end]);
             return Some(Extreme { x: [0.0, self.length][end], value, fibre, axial, moment });
         }
-        let symbol = Symbol::new(if sign > 0.0 { "x_t" } else { "x_c" });
+        let symbol = if sign > 0.0 { XT } else { XC };
         // Without axial load between the ends the stress peaks with the moment, where the shear vanishes.
         let steady = self.field.is_steady_axially();
         let at = self.place(&symbol, &peak, nn, steady);

@@ -7,6 +7,7 @@ mod independent;
 mod laws;
 mod markdown;
 mod packages;
+mod pages;
 mod promises;
 mod published;
 mod readme;
