@@ -22,6 +22,8 @@ pub(super) struct Fault {
 #[derive(Default)]
 pub(super) struct Staged {
     files: Vec<Waiting>,
+    /// Places that hold already what they should.
+    unchanged: Vec<PathBuf>,
     /// Folders made for them, which go again if they stay empty.
     folders: Vec<PathBuf>,
 }
@@ -37,15 +39,21 @@ impl Staged {
     /// # Errors
     /// A file cannot be written (no permission, no room): nothing has been replaced.
     pub(super) fn add(&mut self, outputs: &[Output]) -> Result<(), Fault> {
+        let mut changed: Vec<&Output> = Vec::new();
         for output in outputs {
             self.make_folder(&output.path)?;
-            self.files.push(Waiting { place: output.path.clone(), aside: beside(&output.path, "part") });
+            if holds(&output.path, &output.bytes) {
+                self.unchanged.push(output.path.clone());
+            } else {
+                self.files.push(Waiting { place: output.path.clone(), aside: beside(&output.path, "part") });
+                changed.push(output);
+            }
         }
         // Waiting for the disk is the slow part: several files wait at the same time.
-        let share = outputs.len().div_ceil(WRITERS).max(1);
+        let share = changed.len().div_ceil(WRITERS).max(1);
         let results: Vec<Result<(), Fault>> = std::thread::scope(|scope| {
-            let waiting: Vec<_> =
-                outputs.chunks(share).map(|part| scope.spawn(move || part.iter().try_for_each(write_one))).collect();
+            let write = |part: &[&Output]| part.iter().try_for_each(|output| write_one(output));
+            let waiting: Vec<_> = changed.chunks(share).map(|part| scope.spawn(move || write(part))).collect();
             waiting.into_iter().map(|part| part.join().unwrap_or_else(|e| std::panic::resume_unwind(e))).collect()
         });
         results.into_iter().collect()
@@ -75,7 +83,8 @@ impl Staged {
         for folder in stale {
             let entries = fs::read_dir(folder).into_iter().flatten().flatten();
             for path in entries.map(|entry| entry.path()) {
-                if !files.iter().any(|file| file.place == path) && path.extension().is_some_and(|e| e == "svg") {
+                let ours = self.unchanged.contains(&path) || files.iter().any(|file| file.place == path);
+                if !ours && path.extension().is_some_and(|e| e == "svg") {
                     drop(fs::remove_file(path));
                 }
             }
@@ -104,6 +113,12 @@ impl Drop for Staged {
 
 /// Files synced at the same time.
 const WRITERS: usize = 8;
+
+/// Whether a file holds these bytes; then it is left alone, with its date.
+fn holds(path: &Path, bytes: &[u8]) -> bool {
+    fs::metadata(path).is_ok_and(|about| about.is_file() && about.len() == bytes.len() as u64)
+        && fs::read(path).is_ok_and(|there| there == bytes)
+}
 
 fn write_one(output: &Output) -> Result<(), Fault> {
     let write = || {
