@@ -1,12 +1,10 @@
 //! What ties lines together by name: steps of one kind give one symbol, a cell named like a step's result agrees with it.
 use super::Finding;
 use super::package::Package;
+use super::results::agree;
 use super::step::PrintedStep;
 use super::trace::Cell;
 use std::collections::{BTreeMap, BTreeSet};
-
-/// A cell agrees with a result within one unit of the coarser last place; this much more is binary dust.
-const DUST: f64 = 1e-6;
 
 /// Steps whose number ends alike and whose words are the same are one kind, and give the same symbol.
 pub(super) fn check_symbols(package: &Package, findings: &mut Vec<Finding>) {
@@ -74,13 +72,7 @@ pub(super) fn check_cells(package: &Package, confirmed: &mut BTreeSet<Cell>, fin
             for (column_at, (symbol, _)) in table.columns.iter().enumerate() {
                 let Some(steps) = results.get(&(owner.as_str(), symbol.clone())) else { continue };
                 let Some(number) = table.number(row_at, column_at) else { continue };
-                let agrees = |step: &&&PrintedStep| {
-                    let size = |n: &crate::formula::PrintedNumber| n.printed.unit_of_last_place() * n.unit.scale;
-                    let unit = size(&step.result).max(size(&number));
-                    step.result.unit.dimension == number.unit.dimension
-                        && (step.result.si() - number.si()).abs() <= unit * (1.0 + DUST)
-                };
-                match (steps.iter().find(agrees), steps.first()) {
+                match (steps.iter().find(|step| agree(&step.result, &number)), steps.first()) {
                     (Some(_), _) => {
                         confirmed.insert((table_at, row_at, column_at));
                     }
