@@ -6,6 +6,9 @@ use super::step::PrintedStep;
 use super::trace::Cell;
 use std::collections::{BTreeMap, BTreeSet};
 
+/// Tables that state every force for which there is a step; others may leave cells blank.
+const COMPLETE: &[&str] = &["F", "J"];
+
 /// Steps whose number ends alike and whose words are the same are one kind, and give the same symbol.
 pub(super) fn check_symbols(package: &Package, findings: &mut Vec<Finding>) {
     let mut kinds: BTreeMap<(&str, &str), BTreeMap<&str, Vec<&PrintedStep>>> = BTreeMap::new();
@@ -62,23 +65,24 @@ pub(super) fn check_cells(package: &Package, confirmed: &mut BTreeSet<Cell>, fin
         }
     }
     for (table_at, table) in package.tables.iter().enumerate() {
-        let Some(combination) =
-            table.id.as_deref().and_then(|id| id.rsplit_once('.')).map(|(combination, _)| combination)
-        else {
-            continue;
-        };
+        let Some((combination, kind)) = table.id.as_deref().and_then(|id| id.rsplit_once('.')) else { continue };
         for (row_at, row) in table.rows.iter().enumerate() {
             let owner = format!("{}.{combination}", row.name);
             for (column_at, (symbol, _)) in table.columns.iter().enumerate() {
                 let Some(steps) = results.get(&(owner.as_str(), symbol.clone())) else { continue };
-                let Some(number) = table.number(row_at, column_at) else { continue };
-                match (steps.iter().find(|step| agree(&step.result, &number)), steps.first()) {
+                let number = table.number(row_at, column_at);
+                if number.is_none() && !COMPLETE.contains(&kind) {
+                    continue;
+                }
+                let agrees = |step: &&&PrintedStep| number.as_ref().is_some_and(|number| agree(&step.result, number));
+                match (steps.iter().find(agrees), steps.first()) {
                     (Some(_), _) => {
                         confirmed.insert((table_at, row_at, column_at));
                     }
                     (None, Some(step)) => {
                         let expected = format!("`{}`, {symbol} of step {}", step.result, step.number);
-                        findings.push(Finding::at(row.line, expected, format!("`{number}`")));
+                        let found = row.cells.get(column_at).map_or("", String::as_str);
+                        findings.push(Finding::at(row.line, expected, format!("`{found}`")));
                     }
                     (None, None) => {}
                 }

@@ -136,14 +136,15 @@ fn check_quotes(
 /// Whether a ratio is that of demand to limit, or of limit to demand where the limit must be reached, as far as the
 /// rounding of the three allows.
 fn is_ratio_of(ratio: &PrintedNumber, demand: &PrintedNumber, limit: &PrintedNumber) -> bool {
-    if demand.unit.dimension != limit.unit.dimension {
+    let is_signed = [ratio, demand, limit].iter().any(|number| number.printed.is_negative());
+    if is_signed || demand.unit.dimension != limit.unit.dimension {
         return false;
     }
     let rounding = |number: &PrintedNumber| {
         let half = 0.5 * number.printed.unit_of_last_place();
         half / number.printed.value().abs().max(half)
     };
-    let found = ratio.printed.value().abs();
+    let found = ratio.printed.value();
     let slack = (rounding(demand) + rounding(limit)) * (1.0 + rounding(demand) + rounding(limit));
     let agrees = |quotient: f64| {
         (quotient.abs() - found).abs() <= quotient.abs() * slack + ratio.printed.unit_of_last_place() * (1.0 + DUST)

@@ -26,22 +26,20 @@ pub(super) fn check(package: &Package, confirmed: &mut BTreeSet<Cell>, findings:
         let of = |subject: &str| steps.get(format!("{subject}.{combination}").as_str()).map_or(&[][..], Vec::as_slice);
         for (row_at, row) in table.rows.iter().enumerate() {
             for (column_at, (column, _)) in table.columns.iter().enumerate() {
-                let Some(number) = table.number(row_at, column_at) else { continue };
+                let number = table.number(row_at, column_at);
                 let there = match kind {
                     "R" => named(of(&row.name), &format!("R_{column}")),
                     "A" => audited(of("structure"), &row.name, column),
                     "Q" => largest(of(&row.name), table, row_at, column),
                     _ => None,
                 };
-                match there {
-                    Some(step) if agree(&step.result, &number) => {
-                        confirmed.insert((table_at, row_at, column_at));
-                    }
-                    Some(step) => {
-                        let expected = format!("`{}`, {column} of step {}", step.result, step.number);
-                        findings.push(Finding::at(row.line, expected, format!("`{number}`")));
-                    }
-                    None => {}
+                let Some(step) = there else { continue };
+                if number.is_some_and(|number| agree(&step.result, &number)) {
+                    confirmed.insert((table_at, row_at, column_at));
+                } else {
+                    let expected = format!("`{}`, {column} of step {}", step.result, step.number);
+                    let found = row.cells.get(column_at).map_or("", String::as_str);
+                    findings.push(Finding::at(row.line, expected, format!("`{found}`")));
                 }
             }
         }
