@@ -2,6 +2,8 @@
 mod commands;
 mod damage;
 mod diagnostics;
+#[path = "../fuzz/mod.rs"]
+mod fuzz;
 mod independent;
 mod laws;
 mod markdown;
