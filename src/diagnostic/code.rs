@@ -26,7 +26,7 @@ codes! {
     NotYaml "E001" "the file is not YAML"
         "The text breaks the rules of YAML, so nothing after this place can be trusted. Common causes: a bracket or quote that is not closed, a line indented differently from its neighbours, or a text with `: ` in it that is not in quotes."
     TooLarge "E002" "the file is too large"
-        "Files above 64 MiB are not read. A package is for a small structure that somebody can check."
+        "Files above 16 MiB are not read. A package is for a small structure that somebody can check."
     TooDeep "E003" "blocks lie too deep in one another"
         "Blocks may lie 64 deep; the language itself needs 8. The usual cause is a row of brackets that are not closed."
     SecondDocument "E004" "the file holds a second document"

@@ -7,7 +7,8 @@ use saphyr_parser::{Event, Marker, Parser, ScalarStyle, ScanError, Span};
 use std::collections::BTreeMap;
 use std::ops::Range;
 
-const LARGEST_BYTES: usize = 64 << 20;
+/// Room for a hundred thousand members; what is read takes some hundred times the file in memory.
+const LARGEST_BYTES: usize = 16 << 20;
 const DEEPEST: usize = 64;
 /// Values that aliases may add to a file in all.
 const LARGEST_EXPANSION: usize = 10_000;
@@ -18,7 +19,7 @@ pub(super) fn locate(text: &str) -> (Option<Place>, Diagnostics) {
     if text.len() > LARGEST_BYTES {
         faults.push(
             whole_file(Code::TooLarge)
-                .message(format!("the file has {} MiB; at most 64 MiB are read", text.len() >> 20))
+                .message(format!("the file has {} MiB; at most 16 MiB are read", text.len() >> 20))
                 .help("a calculation package is for a small structure: split the file"),
         );
         return (None, faults);

@@ -33,6 +33,24 @@ pub(super) fn diagnose(model: &Model, failure: &Failure) -> Vec<Diagnostic> {
     vec![diagnostic]
 }
 
+/// A node that moves further than this, in m, belongs to no structure; forces that go with it could not be printed.
+const FURTHEST: f64 = 1e6;
+
+/// The node that moves beyond all measure, if one does.
+pub(super) fn out_of_this_world(model: &Model, solution: &Solution) -> Option<Diagnostic> {
+    let moves = |movement: &[f64; 3]| movement.iter().any(|part| part.abs() > FURTHEST);
+    let (combination, node) = solution
+        .combinations
+        .iter()
+        .enumerate()
+        .find_map(|(at, solved)| Some((at, solved.displacements.iter().position(moves)?)))?;
+    let (node, combination) = (&model.nodes[node].name, &model.combinations[combination].name);
+    let fault = Diagnostic::error(Code::BeyondArithmetic, Address::parse(&format!("nodes.{node}"))).message(format!(
+        "node `{node}` would move by more than a thousand kilometres under combination {combination}"
+    ));
+    Some(fault.label("moves beyond all measure").help("check the loads, the stiffness and the units"))
+}
+
 /// Sentences of a text, without the stop at their end.
 fn sentences(text: &str) -> Vec<String> {
     text.split(". ")

@@ -65,6 +65,9 @@ pub fn solve(text: &str) -> Result<Solved, Box<Refusal>> {
         failure::diagnose(&model, &fault).into_iter().for_each(|diagnostic| faults.push(diagnostic));
         refuse(faults.placed(&reading.source))
     })?;
+    if let Some(fault) = failure::out_of_this_world(&model, &solution) {
+        return Err(refuse([fault].into_iter().collect::<Diagnostics>().placed(&reading.source)));
+    }
     let results = sheet::results(&model, &solution);
     let sha256 = Sha256::digest(text.as_bytes()).iter().map(|byte| format!("{byte:02x}")).collect();
     Ok(Solved { model, solution, results, warnings: reading.warnings, source: reading.source, sha256 })

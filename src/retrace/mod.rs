@@ -10,18 +10,22 @@ mod closing;
 mod confirm;
 mod evaluate;
 mod fingerprint;
+mod input;
 mod listed;
 mod markdown;
+mod matrix;
 mod naming;
 mod package;
 mod quote;
 mod report;
+mod results;
 mod step;
 mod structure;
 mod table;
 #[cfg(test)]
 mod tests;
 mod trace;
+mod typed;
 mod verdict;
 
 pub use confirm::confirm;

@@ -1,12 +1,13 @@
 //! What ties lines together by name: steps of one kind give one symbol, a cell named like a step's result agrees with it.
 use super::Finding;
 use super::package::Package;
+use super::results::agree;
 use super::step::PrintedStep;
 use super::trace::Cell;
 use std::collections::{BTreeMap, BTreeSet};
 
-/// A cell agrees with a result within one unit of the coarser last place; this much more is binary dust.
-const DUST: f64 = 1e-6;
+/// Tables that state every force for which there is a step; others may leave cells blank.
+const COMPLETE: &[&str] = &["F", "J"];
 
 /// Steps whose number ends alike and whose words are the same are one kind, and give the same symbol.
 pub(super) fn check_symbols(package: &Package, findings: &mut Vec<Finding>) {
@@ -64,29 +65,24 @@ pub(super) fn check_cells(package: &Package, confirmed: &mut BTreeSet<Cell>, fin
         }
     }
     for (table_at, table) in package.tables.iter().enumerate() {
-        let Some(combination) =
-            table.id.as_deref().and_then(|id| id.rsplit_once('.')).map(|(combination, _)| combination)
-        else {
-            continue;
-        };
+        let Some((combination, kind)) = table.id.as_deref().and_then(|id| id.rsplit_once('.')) else { continue };
         for (row_at, row) in table.rows.iter().enumerate() {
             let owner = format!("{}.{combination}", row.name);
             for (column_at, (symbol, _)) in table.columns.iter().enumerate() {
                 let Some(steps) = results.get(&(owner.as_str(), symbol.clone())) else { continue };
-                let Some(number) = table.number(row_at, column_at) else { continue };
-                let agrees = |step: &&&PrintedStep| {
-                    let size = |n: &crate::formula::PrintedNumber| n.printed.unit_of_last_place() * n.unit.scale;
-                    let unit = size(&step.result).max(size(&number));
-                    step.result.unit.dimension == number.unit.dimension
-                        && (step.result.si() - number.si()).abs() <= unit * (1.0 + DUST)
-                };
+                let number = table.number(row_at, column_at);
+                if number.is_none() && !COMPLETE.contains(&kind) {
+                    continue;
+                }
+                let agrees = |step: &&&PrintedStep| number.as_ref().is_some_and(|number| agree(&step.result, number));
                 match (steps.iter().find(agrees), steps.first()) {
                     (Some(_), _) => {
                         confirmed.insert((table_at, row_at, column_at));
                     }
                     (None, Some(step)) => {
                         let expected = format!("`{}`, {symbol} of step {}", step.result, step.number);
-                        findings.push(Finding::at(row.line, expected, format!("`{number}`")));
+                        let found = row.cells.get(column_at).map_or("", String::as_str);
+                        findings.push(Finding::at(row.line, expected, format!("`{found}`")));
                     }
                     (None, None) => {}
                 }

@@ -5,7 +5,7 @@ use super::report::Coverage;
 use super::step::{PrintedStep, is_step_number};
 use super::table::PrintedTable;
 use super::trace::Cell;
-use super::verdict::said;
+use super::verdict::{Said, said};
 use crate::formula::PrintedNumber;
 use std::collections::{BTreeMap, BTreeSet};
 
@@ -103,8 +103,12 @@ fn check_quotes(
                 find(format!("the ratio of {demand} and {limit}"), format!("`{ratio}`"));
             }
         }
+        let verdict = (0..row.cells.len()).find(|at| heading(*at) == "verdict").and_then(|at| said(&row.cells[at]));
+        // What was not checked as a whole has no ratio, though a part of it was worked.
+        let has_no_ratio = verdict == Some(Said::NotChecked) && quoting.is_empty();
         if let Some(step) = named
             && !numbers.is_empty()
+            && !has_no_ratio
         {
             let same = |(_, number): &(usize, PrintedNumber)| number.prints_as(&step.result);
             let is_quoted = if quoting.is_empty() { numbers.iter().any(same) } else { quoting.iter().all(|n| same(n)) };
@@ -116,7 +120,6 @@ fn check_quotes(
                 find(format!("`{}`, the result of step {}", step.result, step.number), found);
             }
         }
-        let verdict = (0..row.cells.len()).find(|at| heading(*at) == "verdict").and_then(|at| said(&row.cells[at]));
         let Some(verdict) = verdict else { continue };
         match (named.and_then(|step| step.comparison.as_ref().map(|c| (step, c))), quoting.as_slice()) {
             (Some((step, comparison)), _) if !verdict.suits(comparison.ok) => {
@@ -133,14 +136,15 @@ fn check_quotes(
 /// Whether a ratio is that of demand to limit, or of limit to demand where the limit must be reached, as far as the
 /// rounding of the three allows.
 fn is_ratio_of(ratio: &PrintedNumber, demand: &PrintedNumber, limit: &PrintedNumber) -> bool {
-    if demand.unit.dimension != limit.unit.dimension {
+    let is_signed = [ratio, demand, limit].iter().any(|number| number.printed.is_negative());
+    if is_signed || demand.unit.dimension != limit.unit.dimension {
         return false;
     }
     let rounding = |number: &PrintedNumber| {
         let half = 0.5 * number.printed.unit_of_last_place();
         half / number.printed.value().abs().max(half)
     };
-    let found = ratio.printed.value().abs();
+    let found = ratio.printed.value();
     let slack = (rounding(demand) + rounding(limit)) * (1.0 + rounding(demand) + rounding(limit));
     let agrees = |quotient: f64| {
         (quotient.abs() - found).abs() <= quotient.abs() * slack + ratio.printed.unit_of_last_place() * (1.0 + DUST)

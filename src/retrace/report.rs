@@ -53,6 +53,8 @@ pub struct Coverage {
     pub table_numbers: usize,
     /// Those of them on which a step draws, or which were compared with a step or added up.
     pub table_numbers_confirmed: usize,
+    /// Each table that holds others, with how many.
+    pub open_tables: Vec<(String, usize)>,
     /// Results quoted in tables and in the verdict that were compared with their step.
     pub quotes: usize,
     /// Numbers on the page that belong to no step and to no table, such as those of prose: nobody confirmed them.
@@ -93,6 +95,10 @@ impl fmt::Display for Report {
         writeln!(f, "operands traced: {} of {}", coverage.operands_traced, coverage.operands)?;
         writeln!(f, "tables: {}", coverage.tables)?;
         writeln!(f, "numbers in tables confirmed: {} of {}", coverage.table_numbers_confirmed, coverage.table_numbers)?;
+        if !coverage.open_tables.is_empty() {
+            let tables: Vec<String> = coverage.open_tables.iter().map(|(id, count)| format!("{id} {count}")).collect();
+            writeln!(f, "numbers in tables that nothing confirms: {}", tables.join(", "))?;
+        }
         writeln!(f, "quoted results compared: {}", coverage.quotes)?;
         writeln!(f, "numbers in neither step nor table: {}", coverage.loose_numbers)?;
         if !coverage.orphans.is_empty() {

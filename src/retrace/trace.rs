@@ -3,9 +3,9 @@ use super::Finding;
 use super::package::Package;
 use super::report::Coverage;
 use super::step::PrintedStep;
+use super::typed::{is_same, quantity, text};
 use crate::diagnostic::{Address, Source};
 use crate::formula::{PrintedNumber, Symbol};
-use crate::units::{Dimension, parse_number, parse_quantity};
 use std::collections::btree_map::Entry;
 use std::collections::{BTreeMap, BTreeSet};
 
@@ -32,14 +32,14 @@ pub(super) type Cell = (usize, usize, usize);
 pub(super) struct Addresses<'p> {
     package: &'p Package,
     places: BTreeMap<String, Place>,
-    input: Option<Source>,
+    input: Option<&'p Source>,
     /// Cells on which steps draw.
     drawn: BTreeSet<Cell>,
 }
 
 impl<'p> Addresses<'p> {
     /// Gathers the addresses; one that is given twice is a finding.
-    pub(super) fn new(package: &'p Package, findings: &mut Vec<Finding>) -> Self {
+    pub(super) fn new(package: &'p Package, input: Option<&'p Source>, findings: &mut Vec<Finding>) -> Self {
         let mut places = BTreeMap::new();
         let mut add = |address: String, place: Place, line: usize| match places.entry(address) {
             Entry::Vacant(entry) => {
@@ -62,12 +62,7 @@ impl<'p> Addresses<'p> {
                 }
             }
         }
-        Self {
-            package,
-            places,
-            input: package.echo.as_ref().map(|echo| Source::new(&echo.text)),
-            drawn: BTreeSet::new(),
-        }
+        Self { package, places, input, drawn: BTreeSet::new() }
     }
 
     /// Follows every operand of a step and gives how many were traced.
@@ -121,21 +116,13 @@ impl<'p> Addresses<'p> {
     fn compare_input(&self, address: &str, number: &PrintedNumber) -> Result<(), (String, String)> {
         let nowhere = || ("a step, a table cell or an input".to_owned(), "nothing".to_owned());
         let path = Address::parse(address);
-        let input = self.input.as_ref().filter(|_| path.to_string() == address).ok_or_else(nowhere)?;
-        let found = input.find(&path).filter(|found| found.is_text).ok_or_else(nowhere)?;
-        let typed = input.text().get(found.value).unwrap_or_default().trim_matches(['"', '\'']);
-        let differs = || (format!("`{number}`"), format!("`{typed}` in the input"));
-        let (value, dimension) = match (parse_quantity(typed), typed.strip_suffix('%')) {
-            (Ok(quantity), _) => (quantity.value, quantity.dimension),
-            (Err(_), Some(percent)) => (parse_number(percent).map_err(|_| differs())? / 100.0, Dimension::NONE),
-            (Err(_), None) => return Err(differs()),
-        };
-        let in_unit = value / number.unit.scale;
-        let unit = number.printed.unit_of_last_place();
-        let is_zero = number.printed.count == 0 && value.abs() <= 0.0;
-        let is_same = (dimension == number.unit.dimension || is_zero)
-            && (in_unit - number.printed.value()).abs() <= unit * (0.5 + 1e-6);
-        if is_same { Ok(()) } else { Err(differs()) }
+        let input = self.input.filter(|_| path.to_string() == address).ok_or_else(nowhere)?;
+        let typed = text(input, &path).ok_or_else(nowhere)?;
+        if quantity(typed).is_some_and(|typed| is_same(&typed, number)) {
+            Ok(())
+        } else {
+            Err((format!("`{number}`"), format!("`{typed}` in the input")))
+        }
     }
 
     /// Steps that rest on themselves, and steps on which nothing draws.

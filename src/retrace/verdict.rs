@@ -6,7 +6,7 @@ use super::report::Coverage;
 use super::step::PrintedStep;
 use super::table::PrintedTable;
 use crate::formula::{PrintedNumber, parse_printed};
-use std::collections::BTreeMap;
+use std::collections::{BTreeMap, BTreeSet};
 
 /// What words say of a comparison.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
@@ -79,10 +79,11 @@ fn check_governing(package: &Package, findings: &mut Vec<Finding>, coverage: &mu
         .filter(|step| step.comparison.is_some())
         .map(|step| (step.number.as_str(), step))
         .collect();
-    let utilisations = package
-        .steps
-        .iter()
-        .filter(|step| step.comparison.as_ref().is_some_and(|c| c.is_at_most == c.ok && is_one(&c.limit)));
+    let parts = parts_of_unchecked(package);
+    let utilisations = package.steps.iter().filter(|step| {
+        step.comparison.as_ref().is_some_and(|c| c.is_at_most == c.ok && is_one(&c.limit))
+            && !parts.contains(step.number.as_str())
+    });
     let largest = utilisations.max_by(|a, b| a.result.si().total_cmp(&b.result.si()));
     for (line, text) in &package.governing {
         let tokens = || text.split_whitespace().map(|t| t.trim_matches(|c: char| !c.is_alphanumeric() && c != '−'));
@@ -122,6 +123,18 @@ fn check_governing(package: &Package, findings: &mut Vec<Finding>, coverage: &mu
             findings.push(Finding::at(*line, expected, format!("`{}`", step.result)));
         }
     }
+}
+
+/// Steps in rows that say a check was not made as a whole: they cannot govern.
+fn parts_of_unchecked(package: &Package) -> BTreeSet<&str> {
+    let mut parts = BTreeSet::new();
+    for table in &package.tables {
+        let Some(column) = verdict_column(table) else { continue };
+        let open =
+            table.rows.iter().filter(|row| row.cells.get(column).is_some_and(|c| said(c) == Some(Said::NotChecked)));
+        parts.extend(open.flat_map(|row| &row.cells).map(String::as_str));
+    }
+    parts
 }
 
 /// Counts `Within …`, `Beyond …`, `Not checked` in a table against the rows of the largest table with a verdict, or

@@ -4,7 +4,7 @@ use super::geometry::Geometry;
 use std::sync::Arc;
 
 /// A strip that is never cut, as wide as the sheet.
-#[derive(Debug, Default)]
+#[derive(Debug, Clone, Default)]
 pub(super) struct Slab {
     /// What is placed; y counts from the slab's top, x from the sheet's left edge.
     pub(super) frame: Frame,

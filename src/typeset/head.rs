@@ -88,9 +88,10 @@ pub(super) fn fitted(text: &str, kind: Type, room: f32, setter: &mut Setter<'_>,
         setter.set(frame, &line, kind, x, y);
         return;
     }
-    let mut cut = line.len();
-    while cut > 0 && setter.width(&line[..cut], kind) + setter.width("…", kind) > room {
-        cut = line[..cut].char_indices().next_back().map_or(0, |(at, _)| at);
-    }
+    // Halved again and again: a title may be of any length, and stands at the head of every sheet.
+    let ends: Vec<usize> = line.char_indices().map(|(at, _)| at).collect();
+    let mark = setter.width("…", kind);
+    let fitting = ends.partition_point(|&end| setter.width(&line[..end], kind) + mark <= room);
+    let cut = fitting.checked_sub(1).map_or(0, |last| ends[last]);
     setter.set(frame, &format!("{}…", line[..cut].trim_end()), kind, x, y);
 }

@@ -88,12 +88,11 @@ pub fn typeset(document: &Document, sheet: &Sheet, paper: Paper, fonts: &Fonts) 
     let parts = document.blocks.len().div_ceil(BLOCKS);
     let set = side_by_side(
         parts,
-        || (),
-        |(), part| {
-            let mut setter = Setter::new(fonts);
+        || Setter::new(fonts),
+        |setter, part| {
             let blocks = (part * BLOCKS..document.blocks.len().min((part + 1) * BLOCKS))
                 .map(|at| {
-                    let mut slabs = block::set(&document.blocks[at], column, &mut setter);
+                    let mut slabs = block::set(&document.blocks[at], column, setter);
                     if introduces(&document.blocks, at)
                         && slabs.len() <= INTRODUCTION
                         && let Some(last) = slabs.last_mut()
@@ -103,7 +102,7 @@ pub fn typeset(document: &Document, sheet: &Sheet, paper: Paper, fonts: &Fonts) 
                     slabs
                 })
                 .collect::<Vec<_>>();
-            (blocks, setter.missing)
+            (blocks, std::mem::take(&mut setter.missing))
         },
     );
     let mut blocks = document.blocks.iter();

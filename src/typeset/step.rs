@@ -7,10 +7,11 @@ use super::frame::{Anchor, Frame, Item, Path};
 use super::geometry::{BASELINE, FINE, Geometry, LEADING, SMALL, TEXT};
 use super::maths::{Filling, Line, Maths};
 use super::paragraph::{Paragraph, body_type};
-use super::text::{Setter, Type};
+use super::text::{SetFormula, Setter, Type};
 use super::uses;
-use crate::formula::{Symbol, with_numbers, with_symbols};
+use crate::formula::{Symbol, Tree, with_numbers, with_symbols};
 use crate::sheet::{Sheet, Step};
+use std::rc::Rc;
 
 /// Size of formulas on a step.
 const FORMULA: f32 = 10.4;
@@ -79,16 +80,7 @@ impl StepPage<'_, '_> {
         let tree = step.definition.tree();
         let symbol = step.definition.symbol();
 
-        let mut frame = Frame::default();
-        frame.speak(&format!("{symbol} = {}", with_symbols(tree)));
-        let mut maths = Maths { setter: self.setter, frame: &mut frame };
-        let left = maths.symbol(symbol, None, FORMULA);
-        let (left_width, left_height, left_depth) = (left.width, left.height, left.depth);
-        frame.shift(left.from, self.geometry.text, 0.0);
-        let equals = self.geometry.text + (left_width + 5.0).max(LEFT_SIDE);
-        let lines =
-            self.side(&mut frame, equals, |maths, width| maths.lines(tree, Filling::Symbols, FORMULA, width, INDENT));
-        self.stack(frame, &lines, left_height, left_depth);
+        let equals = self.in_symbols(symbol, tree);
 
         let mut frame = Frame::default();
         let spoken = with_numbers(tree, &|symbol| {
@@ -107,6 +99,29 @@ impl StepPage<'_, '_> {
         });
         self.stack(frame, &lines, 0.0, 0.0);
         self.result(step, equals);
+    }
+
+    /// Sets the formula in symbols and gives the place of its equals sign.
+    fn in_symbols(&mut self, symbol: &Symbol, tree: &Tree) -> f32 {
+        let text = format!("{symbol} = {}", with_symbols(tree));
+        if let Some(known) = self.setter.formulas.get(&text).map(Rc::clone) {
+            self.slabs.extend(known.slabs.iter().cloned());
+            return known.equals;
+        }
+        let first = self.slabs.len();
+        let mut frame = Frame::default();
+        frame.speak(&text);
+        let mut maths = Maths { setter: self.setter, frame: &mut frame };
+        let left = maths.symbol(symbol, None, FORMULA);
+        let (left_width, left_height, left_depth) = (left.width, left.height, left.depth);
+        frame.shift(left.from, self.geometry.text, 0.0);
+        let equals = self.geometry.text + (left_width + 5.0).max(LEFT_SIDE);
+        let lines =
+            self.side(&mut frame, equals, |maths, width| maths.lines(tree, Filling::Symbols, FORMULA, width, INDENT));
+        self.stack(frame, &lines, left_height, left_depth);
+        let slabs = self.slabs[first..].to_vec();
+        self.setter.formulas.insert(text, Rc::new(SetFormula { slabs, equals }));
+        equals
     }
 
     /// Sets the equals sign and what stands to its right.

@@ -1,7 +1,9 @@
 //! Sets a string on a baseline: kerning, scripts, and other faces for what the wanted one lacks.
+use super::flow::Slab;
 use super::frame::{Frame, Glyph, Item, Run};
 use super::{FaceName, Fonts};
-use std::collections::BTreeSet;
+use std::collections::{BTreeMap, BTreeSet};
+use std::rc::Rc;
 
 /// Sets text; remembers the characters that no face has.
 pub(super) struct Setter<'a> {
@@ -9,6 +11,16 @@ pub(super) struct Setter<'a> {
     pub(super) fonts: &'a Fonts,
     /// Characters that no face has.
     pub(super) missing: BTreeSet<char>,
+    /// Formulas in symbols, by their text: many steps begin with the same.
+    pub(super) formulas: BTreeMap<String, Rc<SetFormula>>,
+}
+
+/// A formula in symbols as it was set.
+pub(super) struct SetFormula {
+    /// Its lines as strips.
+    pub(super) slabs: Vec<Slab>,
+    /// Place of its equals sign.
+    pub(super) equals: f32,
 }
 
 /// Face, size and grey of a text.
@@ -48,7 +60,7 @@ impl<'a> Setter<'a> {
     /// A setter that has met no missing character yet.
     #[must_use]
     pub(super) fn new(fonts: &'a Fonts) -> Self {
-        Self { fonts, missing: BTreeSet::new() }
+        Self { fonts, missing: BTreeSet::new(), formulas: BTreeMap::new() }
     }
 
     /// Advance of a text.

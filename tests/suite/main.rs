@@ -3,6 +3,8 @@ mod commands;
 mod damage;
 mod diagnostics;
 mod figures;
+#[path = "../fuzz/mod.rs"]
+mod fuzz;
 mod independent;
 mod laws;
 mod markdown;

@@ -58,6 +58,7 @@ fn deflections(checks: &Fields<'_>, directory: &Directory, faults: &mut Diagnost
     let mut list = Vec::new();
     for (at, raw) in checks.items("deflection", faults).iter().enumerate() {
         let subject = format!("deflection check {}", at + 1);
+        let called = subject.clone();
         let Shape::Map(given) = &raw.shape else {
             let fault = leaf::wrong_form(raw, &subject, "a block of keys");
             faults.push(fault.help("it is written `{member: BC, limit: L/360}` or `{node: B, dir: x, limit: 12 mm}`"));
@@ -80,9 +81,29 @@ fn deflections(checks: &Fields<'_>, directory: &Directory, faults: &mut Diagnost
                 None
             }
         };
-        list.extend(check);
+        if let Some(check) = check {
+            if list.iter().any(|earlier| is_of_the_same(earlier, &check)) {
+                let fault = raw.error(Code::NamedTwice).message(format!("{called} limits what an earlier one limits"));
+                faults.push(fault.label("limited already").help("keep the tighter of the two"));
+            }
+            list.push(check);
+        }
     }
     list
+}
+
+/// Whether two limits are of the same movement: there would be two answers to one question.
+fn is_of_the_same(one: &DeflectionCheck, other: &DeflectionCheck) -> bool {
+    match (one, other) {
+        (DeflectionCheck::Member { member, .. }, DeflectionCheck::Member { member: other, .. }) => {
+            member == other && *member != UNKNOWN
+        }
+        (
+            DeflectionCheck::Node { node, direction, .. },
+            DeflectionCheck::Node { node: other, direction: along, .. },
+        ) => node == other && direction == along && *node != UNKNOWN,
+        _ => false,
+    }
 }
 
 fn member_deflection(

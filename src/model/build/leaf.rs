@@ -123,7 +123,16 @@ fn noun(measure: Measure, dimension: Dimension) -> String {
     }
 }
 
+/// Sizes in SI units between which quantities of engineering lie. What is worked from others could not be printed.
+const SIZES: std::ops::RangeInclusive<f64> = 1e-15..=1e15;
+
 fn signed(raw: &Raw, what: &str, value: f64, sign: Sign) -> Result<f64, Diagnostic> {
+    let size = value.abs();
+    if size > 0.0 && !SIZES.contains(&size) {
+        let (than, label) = if size < 1.0 { ("smaller", "next to nothing") } else { ("greater", "far too much") };
+        let fault = raw.error(Code::OutOfRange).message(format!("{what} is {than} than any structure knows"));
+        return Err(fault.label(label).help("write 0 for nothing, and check the power of ten and the unit"));
+    }
     if sign == Sign::Positive && value <= 0.0 {
         let fault = raw.error(Code::OutOfRange).message(format!("{what} must be above zero"));
         return Err(fault.label("not above zero"));
