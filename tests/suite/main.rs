@@ -4,6 +4,7 @@ mod damage;
 mod diagnostics;
 #[path = "../fuzz/mod.rs"]
 mod fuzz;
+mod hostile;
 mod independent;
 mod laws;
 mod markdown;
