@@ -10,6 +10,7 @@
 pub mod analysis;
 pub mod catalogue;
 pub mod cli;
+mod cores;
 pub mod diagnostic;
 pub mod document;
 pub mod figure;

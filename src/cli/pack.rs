@@ -1,13 +1,14 @@
 //! `pack`: solves a structure and writes its package.
-use super::files::{Output, write_all};
+use super::files::{Fault, Output, Staged};
 use super::{Outcome, say, warn};
 use crate::diagnostic::Colour;
 use crate::document::Templates;
-use crate::package;
+use crate::package::{self, Solved, Texts};
 use crate::typeset::Fonts;
 use clap::Args;
 use std::io::IsTerminal;
 use std::path::{Path, PathBuf};
+use std::sync::OnceLock;
 
 /// Solve a structure and write its package.
 #[derive(Args)]
@@ -27,11 +28,16 @@ pub(super) struct Pack {
 impl Pack {
     pub(super) fn run(&self) -> Outcome {
         let templates = Templates::built_in();
-        let fonts = Fonts::built_in();
-        self.inputs.iter().map(|input| self.one(input, &templates, &fonts)).max().unwrap_or(Outcome::Good)
+        let fonts = OnceLock::new();
+        std::thread::scope(|scope| {
+            // The faces are read while the first structure is being solved.
+            scope.spawn(|| fonts.get_or_init(Fonts::built_in));
+            let fonts = || fonts.get_or_init(Fonts::built_in);
+            self.inputs.iter().map(|input| self.one(input, &templates, &fonts)).max().unwrap_or(Outcome::Good)
+        })
     }
 
-    fn one(&self, input: &Path, templates: &Templates, fonts: &Fonts) -> Outcome {
+    fn one<'f>(&self, input: &Path, templates: &Templates, fonts: &(impl Fn() -> &'f Fonts + Sync)) -> Outcome {
         let shown = input.display().to_string();
         let bytes = match std::fs::read(input) {
             Ok(bytes) => bytes,
@@ -70,54 +76,102 @@ impl Pack {
         }
         let name = input.file_name().map_or_else(|| "input.yaml".into(), |name| name.to_string_lossy().into_owned());
         let stem = input.file_stem().map_or_else(|| "input".into(), |stem| stem.to_string_lossy().into_owned());
-        let stem = if self.blind { format!("{stem}.brief") } else { stem };
-        let made = if self.blind {
-            solved.brief(&name, &text, templates).map_err(|fault| fault.to_string()).and_then(|brief| {
-                let pdf = solved.pdf(&brief, fonts)?;
-                Ok((brief, pdf))
+        let folder = self.out.clone().unwrap_or_else(|| input.parent().map_or_else(PathBuf::new, Path::to_path_buf));
+        let written = if self.blind {
+            let place = folder.join(format!("{stem}.brief"));
+            brief(&solved, &name, &text, templates, fonts(), &place).map(|()| {
+                say(&format!("{}: brief without results written", place.display()));
+                Outcome::Good
             })
         } else {
-            solved.package_and_pdf(&name, &text, templates, fonts)
+            full(&solved, &name, &text, templates, fonts, &folder.join(&stem)).map(|beyond| {
+                report(&folder, &stem, &solved, beyond);
+                if beyond > 0 { Outcome::BeyondLimit } else { Outcome::Good }
+            })
         };
-        let (package, pdf) = match made {
-            Ok(made) => made,
+        match written {
+            Ok(outcome) => outcome,
             Err(fault) => {
-                warn(&format!("error: {fault}"));
-                return Outcome::Failed;
+                warn(&fault);
+                Outcome::Failed
             }
-        };
-        let folder = self.out.clone().unwrap_or_else(|| input.parent().map_or_else(PathBuf::new, Path::to_path_buf));
-        let mut outputs = vec![
-            Output { path: folder.join(format!("{stem}.md")), bytes: package.markdown.into_bytes() },
-            Output { path: folder.join(format!("{stem}.pdf")), bytes: pdf },
-        ];
-        if !self.blind {
-            let path = folder.join(format!("{stem}.results.json"));
-            outputs.push(Output { path, bytes: package.results.into_bytes() });
         }
-        let drawings = folder.join(format!("{stem}.figures"));
-        for (id, svg) in package.figures {
-            outputs.push(Output { path: drawings.join(format!("{id}.svg")), bytes: svg.into_bytes() });
-        }
-        if let Err(fault) = write_all(&outputs) {
-            warn(&format!(
-                "error: `{}` cannot be written: {}\nhelp: earlier files are as they were; free room or choose another folder with --out",
-                fault.path.display(),
-                fault.error
-            ));
-            return Outcome::Failed;
-        }
-        if self.blind {
-            say(&format!("{}: brief without results written", folder.join(&stem).display()));
-            return Outcome::Good;
-        }
-        report(&folder, &stem, &solved, package.beyond);
-        if package.beyond > 0 { Outcome::BeyondLimit } else { Outcome::Good }
     }
 }
 
+/// Writes the brief without results.
+fn brief(
+    solved: &Solved,
+    name: &str,
+    text: &str,
+    templates: &Templates,
+    fonts: &Fonts,
+    place: &Path,
+) -> Result<(), String> {
+    let error = |fault: &dyn std::fmt::Display| format!("error: {fault}");
+    let brief = solved.brief(name, text, templates).map_err(|fault| error(&fault))?;
+    let pdf = solved.pdf(&brief, fonts).map_err(|fault| error(&fault))?;
+    let mut staged = Staged::default();
+    let mut outputs = drawings(place, brief.figures);
+    outputs.push(Output { path: with_ending(place, "md"), bytes: brief.markdown.into_bytes() });
+    outputs.push(Output { path: with_ending(place, "pdf"), bytes: pdf });
+    staged.add(&outputs).map_err(|fault| not_written(&fault))?;
+    staged.publish(&[with_ending(place, "figures")]).map_err(|fault| not_written(&fault))
+}
+
+/// Writes a package and gives the number of checks beyond their limits. The texts are on their way to the disk while
+/// the pages are still set.
+fn full<'f>(
+    solved: &Solved,
+    name: &str,
+    text: &str,
+    templates: &Templates,
+    fonts: &(impl Fn() -> &'f Fonts + Sync),
+    place: &Path,
+) -> Result<usize, String> {
+    let mut staged = Staged::default();
+    let texts_written = |texts: Texts| {
+        let mut outputs = drawings(place, texts.figures);
+        outputs.push(Output { path: with_ending(place, "results.json"), bytes: texts.results.into_bytes() });
+        outputs.push(Output { path: with_ending(place, "md"), bytes: texts.markdown.into_bytes() });
+        staged.add(&outputs)
+    };
+    let (package, texts_written, pdf) = solved
+        .package_and_pdf(name, text, templates, fonts, texts_written)
+        .map_err(|fault| format!("error: {fault}"))?;
+    texts_written.map_err(|fault| not_written(&fault))?;
+    let pdf = Output { path: with_ending(place, "pdf"), bytes: pdf };
+    staged.add(&[pdf]).map_err(|fault| not_written(&fault))?;
+    staged.publish(&[with_ending(place, "figures")]).map_err(|fault| not_written(&fault))?;
+    Ok(package.beyond)
+}
+
+fn drawings(place: &Path, figures: Vec<(String, String)>) -> Vec<Output> {
+    let folder = with_ending(place, "figures");
+    figures
+        .into_iter()
+        .map(|(id, svg)| Output { path: folder.join(format!("{id}.svg")), bytes: svg.into_bytes() })
+        .collect()
+}
+
+/// `<place>.<ending>`: what stands after the last point of a name is part of it.
+fn with_ending(place: &Path, ending: &str) -> PathBuf {
+    let mut name = place.file_name().unwrap_or_default().to_os_string();
+    name.push(".");
+    name.push(ending);
+    place.with_file_name(name)
+}
+
+fn not_written(fault: &Fault) -> String {
+    format!(
+        "error: `{}` cannot be written: {}\nhelp: earlier files are as they were; free room or choose another folder with --out",
+        fault.path.display(),
+        fault.error
+    )
+}
+
 /// What matters of a package in a few lines.
-fn report(folder: &Path, stem: &str, solved: &package::Solved, beyond: usize) {
+fn report(folder: &Path, stem: &str, solved: &Solved, beyond: usize) {
     let checks = crate::sheet::sorted_checks(&solved.results);
     let unchecked = checks.iter().filter(|check| check.ok().is_none()).count();
     let within = checks.len() - unchecked - beyond;

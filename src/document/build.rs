@@ -4,6 +4,7 @@ use super::fault::TemplateFault;
 use super::templates::{ORDER, Templates};
 use super::visible::{escaped, visible_line};
 use super::{Block, Document, Facts, RunningHead, anchor, marks, token};
+use crate::cores::side_by_side;
 use minijinja::syntax::SyntaxConfig;
 use minijinja::value::Value;
 use minijinja::{AutoEscape, Environment, Error, ErrorKind, Output, State, UndefinedBehavior};
@@ -12,15 +13,15 @@ use minijinja::{AutoEscape, Environment, Error, ErrorKind, Output, State, Undefi
 ///
 /// In templates every value is escaped, so that text from the input stands as typed and on one line.
 /// `{{ text|prose }}` lets text from the input keep its paragraphs, lists and emphasis; `{{ number|link }}` prints
-/// the address of a step or a table as a link to it. The module `marks` lists the marks that stand for what is no text.
+/// the address of a step or a table as a link to it, `{{ number|short_link }}` the last part of a step's number. The module `marks` lists the marks that stand for what is no text.
 ///
 /// # Errors
 /// A template that is missing, cannot be parsed, names a fact that does not exist, or prints what cannot be read.
 pub fn build(facts: &Facts, templates: &Templates) -> Result<Document, TemplateFault> {
     let environment = environment(templates)?;
     let known = facts.value();
-    let mut blocks = Vec::new();
-    for (line, chapter) in templates.chapters() {
+    let chapters: Vec<(usize, &str)> = templates.chapters().collect();
+    let read = |line: usize, chapter: &str| {
         let Some(text) = templates.text(chapter).filter(|_| chapter != ORDER) else {
             let message = format!("there is no template called `{chapter}`");
             return Err(TemplateFault { template: ORDER.into(), line: Some(line), message });
@@ -29,10 +30,10 @@ pub fn build(facts: &Facts, templates: &Templates) -> Result<Document, TemplateF
             .get_template(chapter)
             .and_then(|template| template.render(known.clone()))
             .map_err(|error| TemplateFault::from_engine(&error, chapter))?;
-        let read = marks::blocks(&printed, facts)
-            .map_err(|unreadable| TemplateFault::from_print(&unreadable, chapter, text))?;
-        blocks.extend(read);
-    }
+        marks::blocks(&printed, facts).map_err(|unreadable| TemplateFault::from_print(&unreadable, chapter, text))
+    };
+    let parts = side_by_side(chapters.len(), || (), |(), at| read(chapters[at].0, chapters[at].1));
+    let mut blocks = parts.into_iter().collect::<Result<Vec<_>, _>>()?.concat();
     anchor::set(&mut blocks);
     Ok(Document { head: head(facts), blocks })
 }
@@ -54,6 +55,7 @@ fn environment(templates: &Templates) -> Result<Environment<'static>, TemplateFa
     environment.set_formatter(print);
     environment.add_filter("prose", |text: String| Value::from_safe_string(token::prose(&text)));
     environment.add_filter("link", |to: String| Value::from_safe_string(token::link(&to)));
+    environment.add_filter("short_link", |to: String| Value::from_safe_string(token::short(&to)));
     for (name, text) in templates.iter().filter(|(name, _)| !name.starts_with(ORDER)) {
         environment
             .add_template_owned(name.to_string(), text.to_string())

@@ -35,8 +35,14 @@ facts! {
         member_sheets: Vec<MemberSheet>,
         /// Second answers by another route: bounds, energy, orders of magnitude.
         second_answers: Vec<Group>,
-        /// What the sampling rule chose.
+        /// What the sampling rule chose for a line of its own: what governs, what is near its limit.
         sample: Vec<SampleFact>,
+        /// What it chose besides: each kind of formula once, and a draw from the rest.
+        sample_rest: Vec<SampleGroup>,
+        /// Every symbol that a step finds, by name, with the first step of each kind.
+        symbols: Vec<SymbolFact>,
+        /// Every other symbol of the formulas, by name.
+        read_symbols: Vec<SymbolFact>,
         /// Directions that nothing stiffens and nothing loads.
         left_out: Vec<LeftOutFact>,
         /// The input file.
@@ -347,6 +353,34 @@ facts! {
         what: String,
         /// The rule that chose it.
         why: String,
+    }
+
+    /// Steps of the sampling list that one rule chose.
+    SampleGroup {
+        /// The rule, such as `first use of a formula`.
+        why: String,
+        /// The steps by subject.
+        subjects: Vec<SampleSubject>,
+    }
+
+    /// Steps of one subject in the sampling list.
+    SampleSubject {
+        /// What stands before the letter of the steps' numbers, such as `BC.C1`.
+        subject: String,
+        /// The steps' numbers.
+        steps: Vec<String>,
+    }
+
+    /// A symbol of the formulas.
+    SymbolFact {
+        /// The first step that finds it; empty where it is read from a table.
+        address: String,
+        /// As it stands in formulas.
+        symbol: String,
+        /// What it stands for; of a step words, symbol and method, as `retrace` holds them against it.
+        meaning: String,
+        /// The units of its numbers, such as `mm`; empty where it has none.
+        unit: String,
     }
 
     /// A direction that nothing stiffens and nothing loads.

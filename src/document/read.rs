@@ -302,6 +302,10 @@ fn settled(inline: Inline) -> Vec<Inline> {
             .flat_map(|part| match part {
                 Token::Words(words) => vec![Inline::Text(words)],
                 Token::Link(to) => vec![Inline::Link { text: vec![Inline::Text(to.clone())], to }],
+                Token::Short(to) => {
+                    let last = to.rsplit('.').next().unwrap_or_default().to_owned();
+                    vec![Inline::Link { text: vec![Inline::Text(last)], to }]
+                }
                 Token::Prose(text) => flattened(prose(&text)),
             })
             .collect(),

@@ -13,7 +13,7 @@ macro_rules! built_in {
 /// Every template that is built in: its name and its text.
 const BUILT_IN: &[(&str, &str)] = built_in![
     "cover" "revisions" "contents" "purpose" "checking" "input" "results" "equilibrium" "members" "comparison"
-    "checker" "limits" "file" "program"
+    "checker" "symbols" "limits" "file" "program"
     "marks" "caution-licence" "caution-limits" "caution-confirm" "caution-beyond" "caution-not-checked"
     "caution-change" "brief-cover" "brief-signs" "brief-results"
 ];

@@ -141,6 +141,17 @@ fn full(said: &str) -> Facts {
         }],
         second_answers: vec![group("Energy")],
         sample: vec![SampleFact { address: text("BC.C1.E01"), what: said(), why: text("governs") }],
+        sample_rest: vec![SampleGroup {
+            why: text("First use"),
+            subjects: vec![SampleSubject { subject: text("BC.C1"), steps: vec![text("BC.C1.E01")] }],
+        }],
+        symbols: vec![SymbolFact {
+            address: text("BC.C1.E03"),
+            symbol: text("κ_u1"),
+            meaning: said(),
+            unit: text("1/m"),
+        }],
+        read_symbols: vec![SymbolFact { symbol: text("E"), meaning: said(), ..SymbolFact::default() }],
         left_out: vec![LeftOutFact { node: text("B"), direction: text("rotation") }],
         input: InputFacts { name: said(), sha256: text("0badc0de"), text: said() },
         program: ProgramFacts {

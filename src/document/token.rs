@@ -11,6 +11,8 @@ pub(super) enum Token {
     Prose(String),
     /// A link to a step or a table, shown as its address.
     Link(String),
+    /// A link to a step, shown as the last part of its number.
+    Short(String),
 }
 
 /// The run that stands for prose.
@@ -21,6 +23,11 @@ pub(super) fn prose(text: &str) -> String {
 /// The run that stands for a link.
 pub(super) fn link(to: &str) -> String {
     pack('L', to)
+}
+
+/// The run that stands for a link shown as the last part of an address.
+pub(super) fn short(to: &str) -> String {
+    pack('S', to)
 }
 
 fn pack(kind: char, text: &str) -> String {
@@ -67,6 +74,7 @@ fn unpack(token: &str) -> Option<Token> {
     match token.as_bytes()[0] {
         b'P' => Some(Token::Prose(text)),
         b'L' => Some(Token::Link(text)),
+        b'S' => Some(Token::Short(text)),
         _ => None,
     }
 }

@@ -1,14 +1,18 @@
 //! A sheet under way: what is drawn, what must stay clear, which labels wait for room.
-use super::place::{self, Area, Taken, Wish};
+use super::format::Format;
+use super::place::{self, Area, Wish};
 use super::scene::{Anchor, Dash, Item, Scene, Stroke, Style, TextItem};
+use super::taken::Taken;
 use super::text;
 
 /// Width of every drawing, mm.
 pub(super) const WIDTH: f64 = 160.0;
-/// Greatest height of a drawing, mm.
-pub(super) const HEIGHT: f64 = 115.0;
-/// Size of labels, points.
+/// Size of labels where there is room, points.
 pub(super) const SIZE: f64 = 7.5;
+/// Labels in the key of a drawing at most; more are not read, and stand in tables.
+const KEY: usize = 24;
+/// Labels without room after which no more is looked for.
+const VAIN: usize = 300;
 /// Blank edge, mm.
 const EDGE: f64 = 1.5;
 
@@ -44,9 +48,27 @@ pub(super) struct Canvas {
     taken: Taken,
     waiting: Vec<Waiting>,
     notes: Vec<String>,
+    /// Where labels that find no room can be read.
+    elsewhere: String,
+    format: Format,
 }
 
 impl Canvas {
+    /// A blank sheet; `elsewhere` says where labels that find no room can be read.
+    pub(super) fn new(format: Format, elsewhere: impl Into<String>) -> Self {
+        Self { format, elsewhere: elsewhere.into(), ..Self::default() }
+    }
+
+    /// Size of labels, points.
+    pub(super) fn size(&self) -> f64 {
+        self.format.size
+    }
+
+    /// Size of marks on members, compared with the usual.
+    pub(super) fn marks(&self) -> f64 {
+        self.format.marks
+    }
+
     /// Straight lines from point to point.
     pub(super) fn path(&mut self, points: Vec<[f64; 2]>, closed: bool, stroke: Stroke, clear: Clear) {
         self.keep_clear(&points, closed, clear);
@@ -66,7 +88,7 @@ impl Canvas {
 
     /// A circle.
     pub(super) fn circle(&mut self, centre: [f64; 2], radius: f64, stroke: Option<Stroke>, fill: f64) {
-        self.taken.areas.push(Area::about(centre, [radius; 2]));
+        self.taken.area(Area::about(centre, [radius; 2]));
         self.items.push(Item::Path { points: ring(centre, radius, 20), closed: true, stroke, fill: Some(fill) });
     }
 
@@ -109,7 +131,7 @@ impl Canvas {
 
     /// Text at a fixed place: its anchor on the baseline.
     pub(super) fn fixed(&mut self, at: [f64; 2], anchor: Anchor, size: f64, style: Style, text: &str) {
-        self.taken.areas.push(extent(at, anchor, size, text));
+        self.taken.area(extent(at, anchor, size, text));
         self.items.push(Item::Text(TextItem { at, anchor, size, style, text: text.to_owned(), halo: false }));
     }
 
@@ -132,59 +154,80 @@ impl Canvas {
 
     /// Whether nothing that labels keep off stands within so much of a point.
     pub(super) fn is_free(&self, at: [f64; 2], around: f64) -> bool {
-        let area = Area::about(at, [around; 2]);
-        !self.taken.areas.iter().any(|other| area.meets(other))
-            && !self.taken.hard.iter().any(|line| area.crossed(line))
+        !self.taken.covers(&Area::about(at, [around; 2]))
     }
 
     fn keep_clear(&mut self, points: &[[f64; 2]], closed: bool, clear: Clear) {
-        let list = match clear {
-            Clear::Hard => &mut self.taken.hard,
-            Clear::Soft => &mut self.taken.soft,
+        let mut keep = |line| match clear {
+            Clear::Hard => self.taken.hard(line),
+            Clear::Soft => self.taken.soft(line),
         };
-        list.extend(points.windows(2).map(|w| [w[0], w[1]]));
+        points.windows(2).for_each(|w| keep([w[0], w[1]]));
         if let (true, Some(first), Some(last)) = (closed, points.first(), points.last()) {
-            list.push([*last, *first]);
+            keep([*last, *first]);
         }
     }
 
     fn write(&mut self, centre: [f64; 2], half: [f64; 2], style: Style, text: String) {
-        self.taken.areas.push(Area::about(centre, half));
-        let at = [centre[0], centre[1] - half[1] + text::ascent(SIZE)];
-        self.items.push(Item::Text(TextItem { at, anchor: Anchor::Middle, size: SIZE, style, text, halo: true }));
+        self.taken.area(Area::about(centre, half));
+        let size = self.size();
+        let at = [centre[0], centre[1] - half[1] + text::ascent(size)];
+        self.items.push(Item::Text(TextItem { at, anchor: Anchor::Middle, size, style, text, halo: true }));
     }
 
-    /// Places the labels; those without room get a number and stand in a key below. Cuts the sheet to what is drawn.
+    /// Places the labels and cuts the sheet to what is drawn. Labels without room get a number and stand in a key
+    /// below; where they are too many, the drawing says where they can be read.
     pub(super) fn finish(mut self) -> Scene {
-        let sheet = Area { low: [EDGE, EDGE - 20.0], high: [WIDTH - EDGE, HEIGHT + 20.0] };
+        let height = self.format.height;
+        let sheet = Area { low: [EDGE, EDGE - 20.0], high: [WIDTH - EDGE, height + 20.0] };
         let sheet = self.extent().map_or(sheet, |drawn| {
-            let spare = (HEIGHT - 6.0 - (drawn.high[1] - drawn.low[1])).clamp(0.0, 24.0);
-            Area { low: [EDGE, drawn.low[1] - spare / 2.0], high: [WIDTH - EDGE, drawn.high[1] + spare / 2.0] }
+            let spare = (height - 6.0 - (drawn.high[1] - drawn.low[1])).clamp(0.0, 24.0);
+            // What stands too far left moves right in the end, and the labels with it.
+            let left = drawn.low[0].min(EDGE);
+            Area {
+                low: [left, drawn.low[1] - spare / 2.0],
+                high: [left + WIDTH - 2.0 * EDGE, drawn.high[1] + spare / 2.0],
+            }
         });
-        let mut keyed = 0;
-        for label in std::mem::take(&mut self.waiting) {
-            let half = [text::width(&label.text, SIZE) / 2.0, text::height(SIZE) / 2.0];
-            if let Some((centre, anchor, reach)) = place::find(&label.wish, half, &sheet, &self.taken) {
-                if reach > place::LEADER {
-                    let from = leave(centre, half, anchor);
-                    self.line(anchor, from, line(0.12, Dash::Solid, 0.45), Clear::Soft);
-                }
-                self.write(centre, half, label.style, label.text);
-                continue;
+        let waiting = std::mem::take(&mut self.waiting);
+        let labels = waiting.len();
+        let mut without = Vec::new();
+        for label in waiting {
+            if without.len() >= VAIN || !self.place(&label.wish, &label.text, label.style, &sheet) {
+                without.push(label);
             }
-            keyed += 1;
-            let mark = format!("({keyed})");
-            let half = [text::width(&mark, SIZE) / 2.0, text::height(SIZE) / 2.0];
-            if let Some((centre, anchor, reach)) = place::find(&label.wish, half, &sheet, &self.taken) {
-                if reach > place::LEADER {
-                    let from = leave(centre, half, anchor);
-                    self.line(anchor, from, line(0.12, Dash::Solid, 0.45), Clear::Soft);
-                }
-                self.write(centre, half, Style::Bold, mark.clone());
-            }
-            self.notes.push(format!("{mark} {}", label.text));
         }
-        self.close()
+        let keyed = without.len();
+        let mut lost = if keyed > KEY { keyed } else { 0 };
+        if lost == 0 {
+            for (at, label) in without.into_iter().enumerate() {
+                let mark = format!("({})", at + 1);
+                let wish = Wish { far: true, ..label.wish };
+                if self.place(&wish, &mark, Style::Bold, &sheet) {
+                    self.notes.push(format!("{mark} {}", label.text));
+                } else {
+                    lost += 1;
+                }
+            }
+        }
+        if lost > 0 {
+            self.notes.push(std::mem::take(&mut self.elsewhere));
+        }
+        Scene { labels, keyed, lost, ..self.close() }
+    }
+
+    /// Writes a label where there is room for it; whether there was.
+    fn place(&mut self, wish: &Wish, text: &str, style: Style, sheet: &Area) -> bool {
+        let half = [text::width(text, self.size()) / 2.0, text::height(self.size()) / 2.0];
+        let Some((centre, anchor, reach)) = place::find(wish, half, (sheet, &self.taken, self.marks())) else {
+            return false;
+        };
+        if reach > place::LEADER {
+            let from = leave(centre, half, anchor);
+            self.line(anchor, from, line(0.12, Dash::Solid, 0.45), Clear::Soft);
+        }
+        self.write(centre, half, style, text.to_owned());
+        true
     }
 
     /// Writes the notes below in lines as full as they go, and cuts the sheet.
@@ -200,19 +243,20 @@ impl Canvas {
         }
         let mut y = drawn.high[1] + if lines.is_empty() { 0.0 } else { 2.0 };
         for text in lines {
-            let at = [2.0, y + text::ascent(SIZE)];
+            let at = [drawn.low[0].min(EDGE) + 0.5, y + text::ascent(SIZE)];
             self.fixed(at, Anchor::Start, SIZE, Style::Regular, &text);
             y += text::height(SIZE) + 0.6;
         }
         let up = drawn.low[1] - EDGE;
+        let left = drawn.low[0].min(EDGE) - EDGE;
         let height = (y - up + EDGE).ceil();
         for item in &mut self.items {
             match item {
-                Item::Path { points, .. } => points.iter_mut().for_each(|p| p[1] -= up),
-                Item::Text(text) => text.at[1] -= up,
+                Item::Path { points, .. } => points.iter_mut().for_each(|p| *p = [p[0] - left, p[1] - up]),
+                Item::Text(text) => text.at = [text.at[0] - left, text.at[1] - up],
             }
         }
-        Scene { width: WIDTH, height, items: self.items }
+        Scene { width: WIDTH, height, items: self.items, ..Scene::default() }
     }
 
     /// The rectangle about everything drawn.

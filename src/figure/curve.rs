@@ -1,5 +1,6 @@
 //! Curves along members: diagrams, shapes of movement, and members weighted by their ratio.
 use super::canvas::{Canvas, Clear, SIZE, along, ink, line};
+use super::format::{Format, fitting};
 use super::member;
 use super::number::{exact, number, quantity};
 use super::place::Wish;
@@ -34,8 +35,13 @@ pub fn diagram(model: &Model, diagram: &Diagram) -> Option<Figure> {
     if !(largest > 0.0 && largest.is_finite()) {
         return None;
     }
-    let mut canvas = Canvas::default();
-    let view = View::new(model, Room { side: 22.0, above: 15.0, below: 17.0 });
+    Some(fitting(|format| diagram_in(model, diagram, (measure, largest), format)))
+}
+
+fn diagram_in(model: &Model, diagram: &Diagram, (measure, largest): (Measure, f64), format: Format) -> Figure {
+    let elsewhere = format!("Values that found no room here stand in the tables of {}", diagram.combination);
+    let mut canvas = Canvas::new(format, elsewhere);
+    let view = View::new(model, Room { side: 22.0, above: 15.0, below: 17.0 }, format);
     support::draw(&mut canvas, &view, 0.15);
     let sense = if diagram.letter == "M" { -1.0 } else { 1.0 };
     // Short members have little room beside them.
@@ -52,8 +58,16 @@ pub fn diagram(model: &Model, diagram: &Diagram) -> Option<Figure> {
             marks(&mut canvas, &view, member, curve, factor);
         }
     }
+    // The largest values choose their places first.
+    let mut said: Vec<(f64, Wish, String)> = Vec::new();
     for (member, curve) in model.members.iter().zip(&diagram.curves) {
-        values(&mut canvas, &view, member, curve, factor, (measure, largest));
+        said.extend(values(&view, member, curve, factor, (measure, largest)));
+    }
+    said.sort_by(|a, b| b.0.total_cmp(&a.0));
+    for (_, wish, words) in said {
+        if !wish.anchors.first().is_some_and(|tip| canvas.said_near(&words, *tip, 3.0)) {
+            canvas.label(wish, Style::Regular, words);
+        }
     }
     let (word, side) = match diagram.letter {
         "N" => ("Axial force", "tension positive, on the +y side"),
@@ -62,7 +76,7 @@ pub fn diagram(model: &Model, diagram: &Diagram) -> Option<Figure> {
     };
     let unit = model.display.unit(measure);
     let most = quantity(&model.display, measure, largest, 4);
-    Some(Figure {
+    Figure {
         id: format!("{}.{}", diagram.combination, diagram.letter),
         title: format!(
             "{word} {} under {}, in {}: {side}. Largest {most}, drawn {tallest} mm tall. Structure {}.",
@@ -78,7 +92,7 @@ pub fn diagram(model: &Model, diagram: &Diagram) -> Option<Figure> {
             peaks(model, diagram, measure)
         ),
         scene: canvas.finish(),
-    })
+    }
 }
 
 fn peaks(model: &Model, diagram: &Diagram, measure: Measure) -> String {
@@ -163,13 +177,12 @@ fn marks(canvas: &mut Canvas, view: &View<'_>, member: &crate::model::Member, cu
 
 /// Values at the ends, at jumps and at peaks.
 fn values(
-    canvas: &mut Canvas,
     view: &View<'_>,
     member: &crate::model::Member,
     curve: &[(f64, f64)],
     factor: f64,
     (measure, largest): (Measure, f64),
-) {
+) -> Vec<(f64, Wish, String)> {
     let unit = view.model.display.unit(measure).scale;
     let (length, _, normal) = view.axes(member);
     let small = 0.004 * largest;
@@ -194,6 +207,7 @@ fn values(
             }
         }
     }
+    let mut labels = Vec::new();
     for k in said {
         let (x, v) = curve[k];
         if v.abs() <= small {
@@ -201,16 +215,14 @@ fn values(
         }
         let tip = view.on(member, x, v * factor);
         let words = exact(v / unit, 3);
-        if canvas.said_near(&words, tip, 3.0) {
-            continue;
-        }
         let out = if v * factor >= 0.0 { normal } else { normal.map(|c| -c) };
         let mut anchors = vec![tip];
         if steady {
             anchors.extend([0.4, 0.6, 0.3, 0.7, 0.2, 0.8].map(|t| view.on(member, t * length, v * factor)));
         }
-        canvas.label(Wish { anchors, toward: Some(out), gap: 0.7 }, Style::Regular, words);
+        labels.push((v.abs(), Wish { anchors, toward: Some(out), gap: 0.7, far: false }, words));
     }
+    labels
 }
 
 /// A shape of movement: per member, distance from the start (m) and movement in global x and y.
@@ -241,8 +253,13 @@ pub fn shape(model: &Model, shape: &Shape) -> Option<Figure> {
     if !(most.0 > 1e-12 && most.0.is_finite()) {
         return None;
     }
-    let mut canvas = Canvas::default();
-    let view = View::new(model, Room { side: 22.0, above: 13.0, below: 16.0 });
+    Some(fitting(|format| shape_in(model, shape, most, format)))
+}
+
+/// `most` is the largest movement: its size, the member, the place and the movement itself.
+fn shape_in(model: &Model, shape: &Shape, most: (f64, usize, f64, [f64; 2]), format: Format) -> Figure {
+    let mut canvas = Canvas::new(format, "Names of the other nodes stand in the drawing of the structure");
+    let view = View::new(model, Room { side: 22.0, above: 13.0, below: 16.0 }, format);
     let wanted = 9.0 / (view.scale * most.0);
     let ten = 10_f64.powf(wanted.log10().floor());
     let factor = [5.0, 2.0, 1.0].iter().map(|s| s * ten).find(|f| *f <= wanted * 1.0001).unwrap_or(ten);
@@ -268,7 +285,7 @@ pub fn shape(model: &Model, shape: &Shape) -> Option<Figure> {
         let out = [peak[0] - from[0], peak[1] - from[1]];
         let size = out[0].hypot(out[1]).max(1e-9);
         canvas.label(
-            Wish { anchors: vec![peak], toward: Some(out.map(|v| v / size)), gap: 1.2 },
+            Wish { anchors: vec![peak], toward: Some(out.map(|v| v / size)), gap: 1.2, far: false },
             Style::Bold,
             largest.clone(),
         );
@@ -280,7 +297,7 @@ pub fn shape(model: &Model, shape: &Shape) -> Option<Figure> {
     } else {
         String::new()
     };
-    Some(Figure {
+    Figure {
         id: shape.id.clone(),
         title: format!("{}{rest}. Structure {}.", shape.title, view.ratio()),
         alternative: format!(
@@ -290,7 +307,7 @@ pub fn shape(model: &Model, shape: &Shape) -> Option<Figure> {
             if shape.metres { format!(", {largest}") } else { String::new() }
         ),
         scene: canvas.finish(),
-    })
+    }
 }
 
 /// A member's largest ratio, where anything of it was compared.
@@ -310,8 +327,12 @@ const BANDS: [(f64, f64, &str); 4] =
 /// Each member's largest ratio beside it; its line grows with it, dashed where something was not checked.
 #[must_use]
 pub fn utilisation(model: &Model, usage: &[Usage]) -> Figure {
-    let mut canvas = Canvas::default();
-    let view = View::new(model, Room { side: 20.0, above: 8.0, below: 16.0 });
+    fitting(|format| utilisation_in(model, usage, format))
+}
+
+fn utilisation_in(model: &Model, usage: &[Usage], format: Format) -> Figure {
+    let mut canvas = Canvas::new(format, "Ratios that found no room here stand in the comparison with limits");
+    let view = View::new(model, Room { side: 20.0, above: 8.0, below: 16.0 }, format);
     support::draw(&mut canvas, &view, 0.15);
     for (member, usage) in model.members.iter().zip(usage) {
         let [a, b] = view.ends(member);

@@ -3,6 +3,7 @@ mod comb;
 
 use super::Figure;
 use super::canvas::{Canvas, Clear, along, ink, line};
+use super::format::{Format, fitting};
 use super::number::{number, quantity};
 use super::place::Wish;
 use super::scene::{Dash, Style};
@@ -14,8 +15,13 @@ use crate::units::Measure;
 /// The figure `case.<name>`.
 #[must_use]
 pub fn load_case(model: &Model, case: &LoadCase) -> Figure {
-    let mut canvas = Canvas::default();
-    let view = View::new(model, Room { side: 22.0, above: 17.0, below: 18.0 });
+    fitting(|format| drawn(model, case, format))
+}
+
+fn drawn(model: &Model, case: &LoadCase, format: Format) -> Figure {
+    let elsewhere = "Values that found no room here stand in the tables of this load case";
+    let mut canvas = Canvas::new(format, elsewhere);
+    let view = View::new(model, Room { side: 22.0, above: 17.0, below: 18.0 }, format);
     support::draw(&mut canvas, &view, 0.15);
     member::draw_plain(&mut canvas, &view, 0.3, 0.35);
     member::joints(&mut canvas, &view);
@@ -128,7 +134,7 @@ impl Sheet<'_> {
         let member = &self.view.model.members[at];
         let (_, _, normal) = self.view.axes(member);
         let anchors = [0.7, 0.5, 0.6, 0.35, 0.25].map(|t| self.view.on(member, t * length, 0.0)).to_vec();
-        self.canvas.label(Wish { anchors, toward: Some(normal), gap: 1.0 }, Style::Regular, words);
+        self.canvas.label(Wish { anchors, toward: Some(normal), gap: 1.0, far: false }, Style::Regular, words);
     }
 
     /// A force (global, N) at a place. Its tip lies there, unless a member lies in the way of its tail.
@@ -166,7 +172,11 @@ impl Sheet<'_> {
         let (anchor, out) = if blocked { (tip, direction) } else { (tail, direction.map(|v| -v)) };
         let words = self.say(Measure::Force, size);
         let middle = [(tail[0] + tip[0]) / 2.0, (tail[1] + tip[1]) / 2.0];
-        self.canvas.label(Wish { anchors: vec![anchor, middle], toward: Some(out), gap: 0.7 }, Style::Regular, words);
+        self.canvas.label(
+            Wish { anchors: vec![anchor, middle], toward: Some(out), gap: 0.7, far: false },
+            Style::Regular,
+            words,
+        );
     }
 
     fn couple(&mut self, at: [f64; 2], couple: f64) {
@@ -175,7 +185,11 @@ impl Sheet<'_> {
         }
         self.canvas.turning(at, 3.6, couple > 0.0, ink(0.45));
         let words = self.say(Measure::Moment, couple.abs());
-        self.canvas.label(Wish { anchors: vec![at], toward: Some([0.7, -0.7]), gap: 4.4 }, Style::Regular, words);
+        self.canvas.label(
+            Wish { anchors: vec![at], toward: Some([0.7, -0.7]), gap: 4.4, far: false },
+            Style::Regular,
+            words,
+        );
     }
 
     fn settle(&mut self, node: usize, movement: [Option<f64>; 3]) {
@@ -194,7 +208,7 @@ impl Sheet<'_> {
             let words = format!("{} imposed", self.say(Measure::Length, by.abs()));
             let middle = along(start, direction, 5.0);
             self.canvas.label(
-                Wish { anchors: vec![middle, tip], toward: Some(side.map(|v| -v)), gap: 0.9 },
+                Wish { anchors: vec![middle, tip], toward: Some(side.map(|v| -v)), gap: 0.9, far: false },
                 Style::Regular,
                 words,
             );
@@ -202,7 +216,11 @@ impl Sheet<'_> {
         if let Some(turn) = movement[2].filter(|turn| *turn != 0.0) {
             self.canvas.turning(at, 4.6, turn > 0.0, line(0.35, Dash::Dashed, 0.0));
             let words = format!("{} imposed", self.say(Measure::Rotation, turn.abs()));
-            self.canvas.label(Wish { anchors: vec![at], toward: Some([0.7, -0.7]), gap: 5.2 }, Style::Regular, words);
+            self.canvas.label(
+                Wish { anchors: vec![at], toward: Some([0.7, -0.7]), gap: 5.2, far: false },
+                Style::Regular,
+                words,
+            );
         }
     }
 }

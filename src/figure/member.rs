@@ -39,6 +39,8 @@ impl Look {
     }
 
     fn draw(self, canvas: &mut Canvas, a: [f64; 2], b: [f64; 2]) {
+        let marks = canvas.marks();
+        let ink = |width: f64| ink(width * marks);
         match self {
             Self::Frame => canvas.line(a, b, ink(0.7), Clear::Hard),
             Self::Beam => {
@@ -83,7 +85,8 @@ pub(super) fn joints(canvas: &mut Canvas, view: &View<'_>) {
     for node in 0..model.nodes.len() {
         let mut joined = model.members.iter().filter(|m| m.from == node || m.to == node);
         let pinned = joined.all(is_bar);
-        canvas.circle(view.node(node), if pinned { 0.8 } else { 0.6 }, Some(ink(0.25)), if pinned { 1.0 } else { 0.0 });
+        let radius = if pinned { 0.8 } else { 0.6 } * canvas.marks();
+        canvas.circle(view.node(node), radius, Some(ink(0.25)), if pinned { 1.0 } else { 0.0 });
     }
     for member in &model.members {
         let (length, axis, _) = view.axes(member);
@@ -107,7 +110,7 @@ pub(super) fn name(canvas: &mut Canvas, view: &View<'_>, member: &Member, style:
     // Above what lies flat, to the left of what stands.
     let up = if normal[1] > 0.3 || normal[1].abs() <= 0.3 && normal[0] > 0.0 { normal.map(|v| -v) } else { normal };
     let anchors = PLACES.iter().map(|t| view.on(member, t * length, 0.0)).collect();
-    canvas.label(Wish { anchors, toward: Some(up), gap: 1.3 }, style, text);
+    canvas.label(Wish { anchors, toward: Some(up), gap: 1.3, far: false }, style, text);
 }
 
 /// Arrow along the axis from start to end with a tick toward local y, clear of other members.
@@ -120,8 +123,10 @@ pub(super) fn axis(canvas: &mut Canvas, view: &View<'_>, member: &Member) {
     };
     let share = places.iter().find(clear).or_else(|| places.first()).copied().unwrap_or(0.5);
     let at = view.on(member, share * length, 0.0);
-    canvas.head(along(at, axis, 1.1), axis, 2.2);
-    canvas.line(along(at, axis, -1.1), along(along(at, axis, -1.1), normal, 1.9), ink(0.25), Clear::Hard);
+    let size = canvas.marks();
+    canvas.head(along(at, axis, 1.1 * size), axis, 2.2 * size);
+    let foot = along(at, axis, -1.1 * size);
+    canvas.line(foot, along(foot, normal, 1.9 * size), ink(0.25), Clear::Hard);
 }
 
 /// Distance of a point from a stretch.

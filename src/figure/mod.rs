@@ -1,6 +1,8 @@
 //! Drawings made from the solved data: scenes of lines, fills and text in millimetres on paper.
 mod canvas;
 mod curve;
+mod depth;
+mod format;
 mod loads;
 mod member;
 mod number;
@@ -10,10 +12,12 @@ mod section;
 mod signs;
 mod structure;
 mod support;
+mod taken;
 mod text;
 mod view;
 
 pub use curve::{Diagram, Shape, Usage, diagram, shape, utilisation};
+pub use depth::{Depth, Fibres, depth};
 pub use loads::load_case;
 pub use scene::{Anchor, Dash, Item, Scene, Stroke, Style, TextItem};
 pub use section::section;

@@ -1,4 +1,5 @@
 //! Finds free room for labels: places around an anchor, scored against what already stands on the sheet.
+use super::taken::Taken;
 
 /// An upright rectangle: left, top, right, bottom, mm.
 #[derive(Debug, Clone, Copy, PartialEq)]
@@ -45,17 +46,6 @@ impl Area {
     }
 }
 
-/// What already stands on the sheet.
-#[derive(Debug, Clone, Default)]
-pub(super) struct Taken {
-    /// Lines that no label may cross.
-    pub hard: Vec<[[f64; 2]; 2]>,
-    /// Lines that a label crosses unwillingly.
-    pub soft: Vec<[[f64; 2]; 2]>,
-    /// Texts and symbols that no label may cover.
-    pub areas: Vec<Area>,
-}
-
 /// Where a label may stand: anchors in order of preference, and the direction in which it should lie from them.
 #[derive(Debug, Clone, Default)]
 pub(super) struct Wish {
@@ -65,24 +55,34 @@ pub(super) struct Wish {
     pub toward: Option<[f64; 2]>,
     /// Least distance from the anchor.
     pub gap: f64,
+    /// How far beyond the usual a label may go, with a line to its anchor.
+    pub far: bool,
 }
 
 /// Distances tried, beyond the least.
-const REACH: [f64; 7] = [0.0, 1.0, 2.2, 3.8, 6.0, 9.0, 13.0];
+const REACH: [f64; 10] = [0.0, 1.0, 2.2, 3.8, 6.0, 9.0, 13.0, 18.0, 25.0, 34.0];
+/// How many of them are usual.
+const USUAL: usize = 7;
 /// Distance beyond which a label needs a line to its anchor.
 pub(super) const LEADER: f64 = 3.4;
 /// Directions tried.
 const ROUND: usize = 16;
 
 /// The free place of lowest cost: centre, the anchor it belongs to, and its distance from it.
-pub(super) fn find(wish: &Wish, half: [f64; 2], sheet: &Area, taken: &Taken) -> Option<([f64; 2], [f64; 2], f64)> {
+///
+/// `near` is the distance of labels from what they name, compared with the usual.
+pub(super) fn find(
+    wish: &Wish,
+    half: [f64; 2],
+    (sheet, taken, near): (&Area, &Taken, f64),
+) -> Option<([f64; 2], [f64; 2], f64)> {
     let mut candidates = Vec::new();
     for (rank, anchor) in wish.anchors.iter().enumerate() {
-        for reach in REACH {
+        for reach in REACH.into_iter().take(if wish.far { REACH.len() } else { USUAL }).map(|reach| reach * near) {
             for step in 0..ROUND {
                 let turn = step as f64 / ROUND as f64 * std::f64::consts::TAU;
                 let u = [turn.cos(), turn.sin()];
-                let out = wish.gap + reach;
+                let out = wish.gap * near + reach;
                 let centre: [f64; 2] =
                     std::array::from_fn(|i| anchor[i] + u[i] * out + half[i] * (1.6 * u[i]).clamp(-1.0, 1.0));
                 let away = wish.toward.map_or(0.0, |t| 1.0 - (t[0] * u[0] + t[1] * u[1]));
@@ -100,22 +100,27 @@ pub(super) fn find(wish: &Wish, half: [f64; 2], sheet: &Area, taken: &Taken) -> 
         }
         let area = Area::about(centre, half);
         let inside = (0..2).all(|i| area.low[i] >= sheet.low[i] && area.high[i] <= sheet.high[i]);
-        let wide = area.grown(0.35);
-        if !inside
-            || taken.areas.iter().any(|other| wide.meets(other))
-            || taken.hard.iter().any(|line| wide.crossed(line))
-        {
+        let wide = area.grown(0.35 * near);
+        if !inside || taken.covers(&wide) {
             continue;
         }
-        let mut cost = cost + 1.1 * taken.soft.iter().filter(|line| area.crossed(line)).count() as f64;
+        let mut cost = cost + 1.1 * taken.soft_across(&area) as f64;
         if reach > LEADER {
-            let leader = [anchor, centre];
-            let crossings = taken.areas.iter().filter(|other| other.crossed(&leader)).count();
-            cost += 2.5 * crossings as f64;
+            cost += 2.5 * taken.areas_across(&[anchor, centre]) as f64;
+            // A line to its anchor over other members leads the eye astray.
+            if taken.hard_across(&[along(anchor, centre, 0.6), centre]) > 1 {
+                continue;
+            }
         }
         if best.as_ref().is_none_or(|b| cost < b.0) {
             best = Some((cost, centre, anchor, reach));
         }
     }
     best.map(|(_, centre, anchor, reach)| (centre, anchor, reach))
+}
+
+/// The point so far (mm) from one point toward another.
+fn along(from: [f64; 2], to: [f64; 2], by: f64) -> [f64; 2] {
+    let length = (to[0] - from[0]).hypot(to[1] - from[1]).max(1e-9);
+    std::array::from_fn(|i| from[i] + (to[i] - from[i]) * by / length)
 }

@@ -9,6 +9,12 @@ pub struct Scene {
     pub height: f64,
     /// What is drawn, back to front.
     pub items: Vec<Item>,
+    /// Labels that looked for room.
+    pub labels: usize,
+    /// Those of them that found none and stand in the key below, or elsewhere.
+    pub keyed: usize,
+    /// Those of them that have no number in the drawing either.
+    pub lost: usize,
 }
 
 /// One thing drawn.

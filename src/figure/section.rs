@@ -3,6 +3,7 @@ use super::Figure;
 use super::canvas::{Canvas, Clear, SIZE, along, ink, line};
 use super::number::{bare, number, quantity};
 use super::scene::{Anchor, Dash, Style};
+use crate::catalogue::section::Outline;
 use crate::model::{Display, Section};
 use crate::units::Measure;
 
@@ -27,10 +28,7 @@ pub fn section(display: &Display, section: &Section) -> Option<Figure> {
     let centre = [58.0, 8.0 + scale * high];
     let at = |p: [f64; 2]| [centre[0] + scale * p[0], centre[1] - scale * p[1]];
     let mut canvas = Canvas::default();
-    for (k, edge) in outline.loops.iter().enumerate() {
-        let hole = k > 0 && inside(edge.first().copied().unwrap_or_default(), &outline.loops[0]);
-        canvas.shape(edge.iter().map(|p| at(*p)).collect(), Some(ink(0.35)), if hole { 1.0 } else { 0.85 });
-    }
+    self::outline(&mut canvas, &outline, &at);
     let chain = line(0.15, Dash::Chain, 0.0);
     let (west, east) = (at([left, 0.0]), at([right, 0.0]));
     let (north, south) = (at([0.0, high]), at([0.0, low]));
@@ -75,6 +73,14 @@ pub fn section(display: &Display, section: &Section) -> Option<Figure> {
         ),
         scene: canvas.finish(),
     })
+}
+
+/// The outline filled, its holes left white.
+pub(super) fn outline(canvas: &mut Canvas, outline: &Outline, at: &dyn Fn([f64; 2]) -> [f64; 2]) {
+    for (k, edge) in outline.loops.iter().enumerate() {
+        let hole = k > 0 && inside(edge.first().copied().unwrap_or_default(), &outline.loops[0]);
+        canvas.shape(edge.iter().map(|p| at(*p)).collect(), Some(ink(0.35)), if hole { 1.0 } else { 0.85 });
+    }
 }
 
 /// What was typed for the section, a row each.

@@ -1,5 +1,6 @@
 //! The structure as understood: members, supports, hinges, names, dimensions.
 use super::canvas::{Canvas, Clear, SIZE, along, ink};
+use super::format::{Format, fitting};
 use super::number::bare;
 use super::place::Wish;
 use super::scene::{Anchor, Style};
@@ -11,8 +12,13 @@ use crate::units::Measure;
 /// The figure `structure`.
 #[must_use]
 pub fn structure(model: &Model) -> Figure {
-    let mut canvas = Canvas::default();
-    let view = View::new(model, Room { side: 24.0, above: 8.0, below: 22.0 });
+    fitting(|format| drawn(model, format))
+}
+
+fn drawn(model: &Model, format: Format) -> Figure {
+    let elsewhere = "Names that found no room here stand with their coordinates and ends in the tables";
+    let mut canvas = Canvas::new(format, elsewhere);
+    let view = View::new(model, Room { side: 24.0, above: 8.0, below: 22.0 }, format);
     support::draw(&mut canvas, &view, 0.25);
     member::draw(&mut canvas, &view);
     for m in &model.members {
@@ -45,7 +51,11 @@ pub(super) fn node_names(canvas: &mut Canvas, view: &View<'_>, style: Style) {
         let inward = view.inward(at);
         let size = inward[0].hypot(inward[1]);
         let toward = if size > 0.2 { inward.map(|v| -v / size) } else { [-0.7, -0.7] };
-        canvas.label(Wish { anchors: vec![view.node(at)], toward: Some(toward), gap: 1.1 }, style, &node.name);
+        canvas.label(
+            Wish { anchors: vec![view.node(at)], toward: Some(toward), gap: 1.1, far: false },
+            style,
+            &node.name,
+        );
     }
 }
 
@@ -78,7 +88,7 @@ fn chain(canvas: &mut Canvas, view: &View<'_>, stops: &[f64], line: f64, flat: b
         let p = view.point([stop, stop]);
         if flat { [p[0], line] } else { [line, p[1]] }
     };
-    let display = &view.model.display;
+    let (display, size) = (&view.model.display, canvas.size());
     // A stair of lines where parts are too narrow for their figures.
     let dimension = |canvas: &mut Canvas, from: f64, to: f64, line: f64| {
         let (a, b) = (place(from, line), place(to, line));
@@ -92,20 +102,27 @@ fn chain(canvas: &mut Canvas, view: &View<'_>, stops: &[f64], line: f64, flat: b
         let said = bare(display, Measure::Span, to - from, 5);
         let middle = [(a[0] + b[0]) / 2.0, (a[1] + b[1]) / 2.0];
         let room = (b[0] - a[0]).hypot(b[1] - a[1]);
-        if flat && text::width(&said, SIZE) < room - 0.6 {
-            canvas.fixed([middle[0], middle[1] - 0.8], Anchor::Middle, SIZE, Style::Regular, &said);
-        } else if !flat && text::height(SIZE) < room - 0.6 {
-            canvas.fixed([middle[0] - 1.0, middle[1] + 0.9], Anchor::End, SIZE, Style::Regular, &said);
+        if flat && text::width(&said, size) < room - 2.0 {
+            canvas.fixed([middle[0], middle[1] - 0.8], Anchor::Middle, size, Style::Regular, &said);
+        } else if !flat && text::height(size) < room - 0.6 {
+            canvas.fixed([middle[0] - 1.0, middle[1] + 0.9], Anchor::End, size, Style::Regular, &said);
         } else {
             let toward = if flat { [0.0, 1.0] } else { [-1.0, 0.0] };
-            canvas.label(Wish { anchors: vec![middle], toward: Some(toward), gap: 0.6 }, Style::Regular, said);
+            canvas.label(
+                Wish { anchors: vec![middle], toward: Some(toward), gap: 0.6, far: false },
+                Style::Regular,
+                said,
+            );
         }
     };
     for pair in stops.windows(2) {
         dimension(canvas, pair[0], pair[1], line);
     }
     if let ([first, .., last], true) = (stops, stops.len() > 2) {
-        let outer = if flat { line + 5.0 } else { line - 10.0 };
+        let said =
+            |pair: &[f64]| text::width(&bare(&view.model.display, Measure::Span, pair[1] - pair[0], 5), canvas.size());
+        let widest = stops.windows(2).map(said).fold(6.0, f64::max);
+        let outer = if flat { line + 5.0 } else { line - widest - 3.0 };
         dimension(canvas, *first, *last, outer);
         return outer;
     }

@@ -1,5 +1,6 @@
 //! The structure to scale on the sheet.
-use super::canvas::{HEIGHT, WIDTH, along};
+use super::canvas::{WIDTH, along};
+use super::format::Format;
 use crate::model::{Member, Model};
 
 /// Blank room around the structure: left and right, above, below, mm.
@@ -28,20 +29,22 @@ const STEPS: [f64; 8] = [1.0, 1.25, 1.5, 2.0, 2.5, 4.0, 5.0, 7.5];
 
 impl<'a> View<'a> {
     /// The largest of the usual scales that leaves the wanted room.
-    pub(super) fn new(model: &'a Model, room: Room) -> Self {
+    pub(super) fn new(model: &'a Model, room: Room, format: Format) -> Self {
         let bound = |pick: &dyn Fn(&crate::model::Node) -> f64| {
             let all = model.nodes.iter().map(pick);
             (all.clone().fold(f64::INFINITY, f64::min), all.fold(f64::NEG_INFINITY, f64::max))
         };
         let ((left, right), (low, high)) = (bound(&|n| n.x), bound(&|n| n.y));
-        let free = [WIDTH - 2.0 * room.side, HEIGHT - 8.0 - room.above - room.below];
+        // Where labels are small their margins are small as well.
+        let blank = format.marks.max(0.75);
+        let free = [WIDTH - 2.0 * room.side, format.height - 8.0 - (room.above + room.below) * blank];
         let size = [right - left, high - low];
         let most = (0..2).map(|i| free[i] / size[i].max(1e-9)).fold(f64::INFINITY, f64::min);
         let least = 1000.0 / most.max(1e-9);
         let ten = 10_f64.powf(least.log10().floor());
         let ratio = STEPS.iter().map(|s| s * ten).find(|r| *r >= least * (1.0 - 1e-9)).unwrap_or(10.0 * ten);
         let scale = 1000.0 / ratio;
-        let corner = [(WIDTH - scale * size[0]) / 2.0, room.above + scale * size[1]];
+        let corner = [(WIDTH - scale * size[0]) / 2.0, room.above * blank + scale * size[1]];
         Self { model, scale, corner, low: [left, low] }
     }
 

@@ -1,10 +1,11 @@
 //! The comparison with limits and the sampling list, as the templates see them.
-use crate::document::{CheckFacts, CheckRow, Group, MatrixRow, SampleFact};
+use super::symbols::what_it_is;
+use crate::document::{CheckFacts, CheckRow, Group, MatrixRow, SampleFact, SampleGroup, SampleSubject};
 use crate::model::{Combination, DeflectionCheck, MemberKind, Model, Purpose};
 use crate::sheet::{Results, Sheet, Step, ratio_text, sorted_checks};
 use crate::units::Measure;
 use crate::work::Check;
-use std::collections::BTreeSet;
+use std::collections::{BTreeMap, BTreeSet};
 
 /// Every comparison.
 pub(super) fn facts(model: &Model, results: &Results, sheet: &Sheet) -> CheckFacts {
@@ -173,60 +174,69 @@ fn groups(model: &Model, sheet: &Sheet) -> Vec<Group> {
     overview.into_iter().chain(of_steps).collect()
 }
 
-/// Words, symbol and method of a step: what `retrace` holds every step of the package against.
-fn what_it_is(step: &Step) -> String {
-    let (title, symbol) = (step.definition.title(), step.definition.symbol());
-    match step.methods().join(" · ") {
-        by if by.is_empty() => format!("{title}, {symbol}"),
-        by => format!("{title}, {symbol} ({by})"),
-    }
-}
-
 /// What the checker should confirm at least, chosen by rule and not by the originator.
 ///
-/// All governing comparisons, each distinct formula once, everything above 0.8, and a tenth of the rest drawn by the
-/// input's fingerprint. The shares are common practice.
-pub(super) fn sample(results: &Results, sheet: &Sheet, sha256: &str) -> Vec<SampleFact> {
-    let mut chosen: Vec<SampleFact> = Vec::new();
+/// All governing comparisons, everything above 0.8, each distinct formula once, and a tenth of the rest drawn by the
+/// input's fingerprint. The shares are common practice. The first two have a line each, the others stand by subject.
+pub(super) fn sample(results: &Results, sheet: &Sheet, sha256: &str) -> (Vec<SampleFact>, Vec<SampleGroup>) {
     let mut seen = BTreeSet::new();
-    let mut add = |number: &str, why: &str| {
-        if let Some(step) = sheet.step(number)
-            && seen.insert(number.to_owned())
-        {
-            let what = what_it_is(step);
-            chosen.push(SampleFact { address: number.to_owned(), what, why: why.to_owned() });
-        }
-    };
+    let mut chosen = Vec::new();
     let mut subjects = BTreeSet::new();
     for check in sorted_checks(results) {
-        let Some(number) = &check.step else { continue };
-        if subjects.insert(check.subject.clone()) {
-            add(number, "governs its member or node");
+        let Some(step) = check.step.as_deref().and_then(|number| sheet.step(number)) else { continue };
+        let why = if subjects.insert(check.subject.clone()) {
+            "governs"
         } else if check.ratio.is_some_and(|ratio| ratio > 0.8) {
-            add(number, "utilisation above 0.8");
+            "above 0.8"
+        } else {
+            continue;
+        };
+        if seen.insert(step.number.as_str()) {
+            let what = what_it_is(step);
+            chosen.push(SampleFact { address: step.number.clone(), what, why: why.to_owned() });
         }
     }
     let mut formulas = BTreeSet::new();
-    for step in &sheet.steps {
+    let first = |step: &&Step| {
         let letter = step.number.rsplit('.').next().and_then(|last| last.chars().next()).unwrap_or(' ');
         let formula = match letter {
             // Balances differ in their number of terms alone.
             'N' | 'R' => String::new(),
             _ => crate::formula::with_symbols(step.definition.tree()),
         };
-        if formulas.insert((what_it_is(step), formula)) {
-            add(&step.number, "first use of this formula");
-        }
-    }
-    for step in &sheet.steps {
+        formulas.insert((what_it_is(step), formula))
+    };
+    let firsts: Vec<&Step> =
+        sheet.steps.iter().filter(first).filter(|step| seen.insert(step.number.as_str())).collect();
+    let drawn = |step: &&Step| {
         // A tenth, by the fingerprint and the step's own number: other steps do not move the draw.
         let mut hash: u64 = 0xcbf2_9ce4_8422_2325;
         for byte in sha256.bytes().chain(step.number.bytes()) {
             hash = (hash ^ u64::from(byte)).wrapping_mul(0x0100_0000_01b3);
         }
-        if (hash ^ (hash >> 32)).is_multiple_of(10) {
-            add(&step.number, "drawn by the fingerprint");
-        }
+        (hash ^ (hash >> 32)).is_multiple_of(10)
+    };
+    let draw: Vec<&Step> = sheet.steps.iter().filter(drawn).filter(|step| seen.insert(step.number.as_str())).collect();
+    let groups = [("First use of a formula", firsts), ("Drawn by the fingerprint of the input", draw)]
+        .into_iter()
+        .filter(|(_, steps)| !steps.is_empty())
+        .map(|(why, steps)| SampleGroup { why: why.into(), subjects: by_subject(&steps) })
+        .collect();
+    (chosen, groups)
+}
+
+/// Steps under what stands before the letter of their numbers, in the order in which they were worked.
+fn by_subject(steps: &[&Step]) -> Vec<SampleSubject> {
+    let mut subjects: Vec<SampleSubject> = Vec::new();
+    let mut known: BTreeMap<&str, usize> = BTreeMap::new();
+    for step in steps {
+        let subject = step.number.rsplit_once('.').map_or("", |(subject, _)| subject);
+        let at = *known.entry(subject).or_insert_with(|| {
+            subjects.push(SampleSubject { subject: subject.to_owned(), steps: Vec::new() });
+            subjects.len() - 1
+        });
+        subjects[at].steps.push(step.number.clone());
     }
-    chosen
+    subjects.iter_mut().for_each(|subject| subject.steps.sort());
+    subjects
 }

@@ -31,6 +31,8 @@ pub fn facts(
     origin: Origin<'_>,
 ) -> Facts {
     let steps = Index::new(sheet);
+    let (symbols, read_symbols) = super::symbols::facts(&model.display, sheet);
+    let (sample, sample_rest) = comparisons::sample(results, sheet, origin.sha256);
     Facts {
         project: project(&model.project),
         display: DisplayFacts {
@@ -69,7 +71,10 @@ pub fn facts(
             .collect(),
         member_sheets: member_sheets(model, results, sheet, &steps),
         second_answers: second_answers(model, results, sheet, &steps),
-        sample: comparisons::sample(results, sheet, origin.sha256),
+        sample,
+        sample_rest,
+        symbols,
+        read_symbols,
         left_out: solution
             .left_out
             .iter()
@@ -165,6 +170,9 @@ fn tables(sheet: &Sheet, ids: &[&str]) -> Vec<String> {
 fn figures(sheet: &Sheet, ids: &[&str]) -> Vec<String> {
     ids.iter().filter(|id| sheet.figure(id).is_some()).map(|id| (*id).to_owned()).collect()
 }
+
+/// What is said of the stress at the section of largest stress.
+const DEPTH: &str = "Stress through the depth";
 
 /// Steps found by subject, combination and letter, in the order of their numbers.
 struct Index {
@@ -369,12 +377,16 @@ fn member_sheets(model: &Model, results: &Results, sheet: &Sheet, steps: &Index)
                 ("Stress at the ends", name, Some(combination), 'S', 0..10),
                 ("End forces", name, Some(combination), 'F', 0..1000),
                 ("Extremes between the ends", name, Some(combination), 'X', 0..60),
-                ("Shear stress", name, Some(combination), 'S', 10..1000),
+                ("Shear stress", name, Some(combination), 'S', 10..20),
+                (DEPTH, name, Some(combination), 'S', 20..30),
                 ("Comparison with limits", name, Some(combination), 'C', 0..80),
             ];
             let reason = reason(model, results, at, *c);
             let mut groups = steps.groups(&wanted);
             // Headings that repeat would make links depend on their order in the document.
+            groups.iter_mut().filter(|group| group.title == DEPTH).for_each(|group| {
+                group.figures = figures(sheet, &[&format!("{name}.{combination}.depth")]);
+            });
             groups.iter_mut().for_each(|group| group.title = format!("{}, {name}, {combination}", group.title));
             let balance = steps.find(name, Some(combination), 'N', 30..40);
             if !balance.is_empty() {

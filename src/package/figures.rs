@@ -6,6 +6,8 @@ use crate::model::{MemberKind, Model};
 use crate::sheet::{Results, ratio_text};
 use crate::work::{CombinationWork, carries_shear};
 
+pub(super) mod depth;
+
 /// Parts of a member's length at which curves are read.
 const PARTS: usize = 24;
 

@@ -3,6 +3,7 @@ mod comparisons;
 mod facts;
 mod failure;
 mod figures;
+mod symbols;
 mod validation;
 
 pub use facts::{Origin, facts};
@@ -98,6 +99,16 @@ pub struct Package {
     pub beyond: usize,
 }
 
+/// What a package says in text.
+pub struct Texts {
+    /// Markdown.
+    pub markdown: String,
+    /// Results file.
+    pub results: String,
+    /// Drawings: id and SVG text.
+    pub figures: Vec<(String, String)>,
+}
+
 impl Package {
     /// Markdown, results file and drawings.
     fn texts(&self, solved: &Solved) -> (String, String, Vec<(String, String)>) {
@@ -135,25 +146,26 @@ impl Solved {
         Ok(package)
     }
 
-    /// The package with its PDF; both are made at the same time.
+    /// The package with its PDF; both are made at the same time. `ready` gets the texts while the pages are still set.
     ///
     /// # Errors
     /// A template or a font is at fault, as text.
-    pub fn package_and_pdf(
+    pub fn package_and_pdf<'f, R>(
         &self,
         name: &str,
         text: &str,
         templates: &Templates,
-        fonts: &Fonts,
-    ) -> Result<(Package, Vec<u8>), String> {
+        fonts: &(impl Fn() -> &'f Fonts + Sync),
+        ready: impl FnOnce(Texts) -> R,
+    ) -> Result<(Package, R, Vec<u8>), String> {
         let package = self.document(name, text, templates).map_err(|fault| fault.to_string())?;
-        let (texts, pdf) = std::thread::scope(|scope| {
-            let pdf = scope.spawn(|| self.pdf(&package, fonts));
-            let texts = package.texts(self);
-            (texts, pdf.join().unwrap_or_else(|reason| std::panic::resume_unwind(reason)))
+        let (ready, pdf) = std::thread::scope(|scope| {
+            let pdf = scope.spawn(|| self.pdf(&package, fonts()));
+            let (markdown, results, figures) = package.texts(self);
+            let ready = ready(Texts { markdown, results, figures });
+            (ready, pdf.join().unwrap_or_else(|reason| std::panic::resume_unwind(reason)))
         });
-        let (markdown, results, figures) = texts;
-        Ok((Package { markdown, results, figures, ..package }, pdf?))
+        Ok((package, ready, pdf?))
     }
 
     /// Sheet and document of a package, nothing written yet.
@@ -164,6 +176,7 @@ impl Solved {
             (drawn.join(), sheet)
         });
         sheet.figures = drawn.unwrap_or_else(|reason| std::panic::resume_unwind(reason));
+        sheet.figures.extend(figures::depth::draw(&self.model, &self.results, &sheet));
         let origin = Origin { name, text, sha256: &self.sha256 };
         let cautions = failure::cautions(&self.model, &self.solution);
         let facts = facts(&self.model, &self.solution, &self.results, &sheet, cautions, origin);

@@ -57,14 +57,14 @@ fn audited<'p>(steps: &[&'p PrintedStep], row: &str, column: &str) -> Option<&'p
     steps.iter().copied().find(|step| step.number.ends_with(&last))
 }
 
-/// The step with the algebraically largest, or smallest, stress along a member that is worked.
+/// The step of a whole stress, at an end or between, with the algebraically largest, or smallest, stress along a member that is worked.
 fn largest<'p>(steps: &[&'p PrintedStep], table: &PrintedTable, row: usize, column: &str) -> Option<&'p PrintedStep> {
     let worked = table.columns.iter().position(|(symbol, _)| symbol == "worked")?;
     table.rows[row].cells.get(worked).filter(|word| *word == "yes")?;
     let stresses = steps.iter().copied().filter(|step| {
         step.result.unit.dimension == Dimension::STRESS
             && step.symbol.as_str().starts_with('σ')
-            && step.letter().is_some_and(|letter| "SX".contains(letter))
+            && step.number.rsplit('.').next().is_some_and(|last| last.starts_with("S0") || last.starts_with('X'))
     });
     let by_size = |a: &&PrintedStep, b: &&PrintedStep| a.result.si().total_cmp(&b.result.si());
     match column {

@@ -9,8 +9,14 @@ use crate::formula::{PrintedNumber, Symbol};
 use std::collections::btree_map::Entry;
 use std::collections::{BTreeMap, BTreeSet};
 
-/// Kinds of step that end a chain: comparisons, balances, extremes.
-const FINAL_LETTERS: &str = "CNRX";
+/// Kinds of step that are results of their own: comparisons, balances, extremes, stresses, end forces.
+const FINAL_LETTERS: &str = "CNRXSF";
+
+/// Whether a step is a result of its own, or shows that a gap between movements vanishes.
+fn is_end(step: &PrintedStep) -> bool {
+    let vanishes = || step.letter() == Some('D') && step.result.printed.count == 0;
+    step.letter().is_some_and(|letter| FINAL_LETTERS.contains(letter)) || vanishes()
+}
 
 /// Where an address may lead, besides the input.
 #[derive(Debug, Clone, PartialEq)]
@@ -132,7 +138,7 @@ impl<'p> Addresses<'p> {
         coverage.orphans = steps
             .iter()
             .zip(&drawn_on)
-            .filter(|(step, drawn)| **drawn == 0 && step.letter().is_none_or(|letter| !FINAL_LETTERS.contains(letter)))
+            .filter(|(step, drawn)| **drawn == 0 && !is_end(step))
             .map(|(step, _)| step.number.clone())
             .collect();
 

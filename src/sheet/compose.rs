@@ -1,5 +1,5 @@
 //! The whole sheet of a package: steps for what is worked line by line, tables for everything.
-use super::{Recording, Sheet, chapter, digits};
+use super::{Cell, Recording, Sheet, chapter, digits};
 use crate::analysis::Solution;
 use crate::formula::{Silent, Value, Worksheet};
 use crate::model::{DeflectionCheck, Detail, Model};
@@ -228,6 +228,12 @@ pub fn compose(model: &Model, solution: &Solution, results: &Results) -> Sheet {
                     largest,
                 );
                 let loads = work::factored(&mut recording, model, combination, &prepared.loads[member_at]);
+                if results.governing[member_at] == at {
+                    let check = silent.checks.iter().find(|c| c.subject == member.name && c.kind == "stress");
+                    if let Some(place) = work::section_of_largest_stress(&extremes, check) {
+                        work::work_depth(&mut recording, member, combination, &member_forces, &place);
+                    }
+                }
                 work::work_bound(&mut recording, member, combination, &loads, &member_forces, &extremes);
                 if results.deflecting[member_at] == Some(at) {
                     work::work_unit_load(&mut recording, member, combination, &loads, &member_forces, &extremes);
@@ -272,8 +278,37 @@ pub fn compose(model: &Model, solution: &Solution, results: &Results) -> Sheet {
     for table in chapter::tables(model, solution, results, &worked, &mut recording) {
         recording.sheet.push_table(table);
     }
+    leave_out_unused(&mut sheet);
     digits::settle(&mut sheet, model.display.digits);
     sheet
+}
+
+/// Steps that only lead to other steps, by letter: properties, geometry, loads.
+const MEANS: [&str; 3] = [".P", ".G", ".L"];
+
+/// Takes away steps on which nothing draws and which are no result of their own.
+fn leave_out_unused(sheet: &mut Sheet) {
+    let mut users = vec![0_usize; sheet.ledger.entries().len()];
+    for step in &sheet.steps {
+        step.operands.iter().for_each(|(_, id)| users[*id as usize] += 1);
+    }
+    for cell in sheet.tables.iter().flat_map(|table| &table.rows).flat_map(|row| &row.cells) {
+        if let Cell::Quantity(id) = cell {
+            users[*id as usize] += 1;
+        }
+    }
+    // Operands are worked before what draws on them, so one walk from the end meets every chain of unused steps.
+    let mut kept = Vec::with_capacity(sheet.steps.len());
+    while let Some(step) = sheet.steps.pop() {
+        let is_means = step.number.rfind('.').is_some_and(|at| MEANS.iter().any(|m| step.number[at..].starts_with(m)));
+        if is_means && users[step.result as usize] == 0 {
+            step.operands.iter().for_each(|(_, id)| users[*id as usize] -= 1);
+        } else {
+            kept.push(step);
+        }
+    }
+    sheet.step_at.clear();
+    kept.into_iter().rev().for_each(|step| sheet.push_step(step));
 }
 
 /// End forces of a member that is not worked line by line, as its tables state them.

@@ -4,6 +4,7 @@ use super::frame::{Anchor, Frame};
 use super::geometry::{BASELINE, Geometry, LEADING, SMALL, TEXT, TYPED};
 use super::paragraph::{Paragraph, body_type};
 use super::text::{Setter, Type};
+use super::uses::Uses;
 use super::{FaceName, contents, figure, step, table};
 use crate::document::{Block, Document, Inline};
 use crate::sheet::Sheet;
@@ -22,6 +23,7 @@ pub(super) struct Column<'g> {
     pub(super) geometry: &'g Geometry,
     pub(super) sheet: &'g Sheet,
     pub(super) document: &'g Document,
+    pub(super) uses: &'g Uses<'g>,
 }
 
 impl Column<'_> {
@@ -38,9 +40,7 @@ pub(super) fn set(block: &Block, column: Column<'_>, setter: &mut Setter<'_>) ->
         Block::List { ordered, items } => list(*ordered, items, column, setter),
         Block::Caution(blocks) => caution(blocks, column, setter),
         Block::Verbatim(text) => verbatim(text, column, setter),
-        Block::Step(number) => {
-            column.sheet.step(number).map_or_else(Vec::new, |s| step::set(s, column.sheet, setter, column.geometry))
-        }
+        Block::Step(number) => column.sheet.step(number).map_or_else(Vec::new, |s| step::set(s, column, setter)),
         Block::Table(id) => column.sheet.table(id).map_or_else(Vec::new, |t| table::of_sheet(t, column, setter)),
         Block::Figure(id) => column.sheet.figure(id).map_or_else(Vec::new, |f| figure::set(f, setter, column.geometry)),
         Block::Grid { head, rows } => table::of_words(head, rows, column, setter),

@@ -199,7 +199,7 @@ fn figure() -> Figure {
         id: "structure".into(),
         title: "Structure with nodes and members".into(),
         alternative: "A portal of two columns and a beam.".into(),
-        scene: Scene { width: 120.0, height: 58.0, items },
+        scene: Scene { width: 120.0, height: 58.0, items, ..Scene::default() },
     }
 }
 

@@ -19,11 +19,19 @@ pub(super) struct Slab {
     pub(super) head: Option<Arc<Slab>>,
 }
 
+/// A strip with its place on a sheet.
+#[derive(Debug)]
+pub(super) struct Placed {
+    pub(super) frame: Frame,
+    /// Distance of its top from that of the sheet.
+    pub(super) y: f32,
+}
+
 /// Sheets being filled.
 #[derive(Debug)]
 pub(super) struct Flow {
     geometry: Geometry,
-    pub(super) sheets: Vec<Frame>,
+    pub(super) sheets: Vec<Vec<Placed>>,
     y: f32,
     /// Space asked for below the last slab.
     after: f32,
@@ -73,21 +81,21 @@ impl Flow {
         let gap = slab.before.max(self.after);
         let full = self.sheets.is_empty() || self.y >= self.geometry.bottom;
         if full || self.y + gap + slab.height > self.geometry.bottom + 0.01 {
-            self.sheets.push(Frame::default());
+            self.sheets.push(Vec::new());
             self.y = self.geometry.top;
             if let Some(head) = &slab.head {
-                self.put(head.frame.clone(), 0.0, head.height);
+                self.put(head.frame.clone(), head.height);
             }
         } else {
             self.y += gap;
         }
         self.after = slab.after;
-        self.put(slab.frame, 0.0, slab.height);
+        self.put(slab.frame, slab.height);
     }
 
-    fn put(&mut self, frame: Frame, x: f32, height: f32) {
+    fn put(&mut self, frame: Frame, height: f32) {
         if let Some(sheet) = self.sheets.last_mut() {
-            sheet.append(frame, x, self.y);
+            sheet.push(Placed { frame, y: self.y });
         }
         self.y += height;
     }
@@ -114,7 +122,7 @@ mod tests {
     #[test]
     fn a_heading_goes_with_what_follows() {
         let flow = flow_of(vec![slab(660.0, false), slab(20.0, true), slab(60.0, false)]);
-        assert_eq!(flow.sheets.iter().map(|sheet| sheet.items.len()).collect::<Vec<_>>(), [1, 2]);
+        assert_eq!(flow.sheets.iter().map(Vec::len).collect::<Vec<_>>(), [1, 2]);
     }
 
     #[test]
@@ -123,7 +131,7 @@ mod tests {
         let rows = (0..100).map(|_| Slab { head: Some(Arc::clone(&head)), ..slab(12.0, false) });
         let flow = flow_of(rows.collect());
         assert!(flow.sheets.len() > 1);
-        let total: usize = flow.sheets.iter().map(|sheet| sheet.items.len()).sum();
+        let total: usize = flow.sheets.iter().map(Vec::len).sum();
         assert_eq!(total, 100 + flow.sheets.len());
     }
 }

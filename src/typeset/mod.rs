@@ -1,7 +1,6 @@
 //! Sets a document on paper: frames of placed glyphs, rules and paths. Knows no PDF.
 mod block;
 mod contents;
-pub(crate) mod cores;
 mod figure;
 #[cfg(test)]
 pub(crate) mod fixture;
@@ -16,17 +15,20 @@ mod step;
 mod symbols;
 mod table;
 mod text;
+mod uses;
 
 pub use font::{Constants, Face, FaceName, Fonts, Growth, MathFont, Part};
 pub use frame::{Anchor, Frame, Glyph, Item, Link, Path, Rule, Run, Slot};
 
+use crate::cores::side_by_side;
 use crate::document::{Block, Document, Inline};
 use crate::model::Paper;
 use crate::sheet::Sheet;
 use block::Column;
-use flow::Flow;
+use flow::{Flow, Placed};
 use geometry::Geometry;
 use std::collections::{BTreeMap, BTreeSet};
+use std::sync::{Mutex, PoisonError};
 use text::{Setter, Type};
 
 /// A document on paper.
@@ -70,13 +72,7 @@ impl Pages {
     /// Where an address leads: to the thing itself, or to the nearest thing that holds it (a cell's row, its table).
     #[must_use]
     pub fn spot(&self, address: &str) -> Option<Spot> {
-        let mut name = address;
-        loop {
-            if let Some(spot) = self.places.get(name) {
-                return Some(*spot);
-            }
-            name = &name[..name.rfind('.')?];
-        }
+        spot(&self.places, address)
     }
 }
 
@@ -86,10 +82,11 @@ pub fn typeset(document: &Document, sheet: &Sheet, paper: Paper, fonts: &Fonts) 
     let geometry = Geometry::of(paper);
     let mut setter = Setter::new(fonts);
     let mut flow = Flow::new(geometry);
-    let column = Column { left: geometry.text, geometry: &geometry, sheet, document };
+    let uses = uses::Uses::of(sheet);
+    let column = Column { left: geometry.text, geometry: &geometry, sheet, document, uses: &uses };
     // Blocks are set by themselves, side by side, and poured on to the sheets in order.
     let parts = document.blocks.len().div_ceil(BLOCKS);
-    let set = cores::side_by_side(
+    let set = side_by_side(
         parts,
         || (),
         |(), part| {
@@ -122,16 +119,27 @@ pub fn typeset(document: &Document, sheet: &Sheet, paper: Paper, fonts: &Fonts) 
     flow.settle();
     let mut sheets = flow.sheets;
     if sheets.is_empty() {
-        sheets.push(Frame::default());
+        sheets.push(Vec::new());
     }
-    let mut pages = Pages { width: geometry.width, height: geometry.height, ..Pages::default() };
-    collect_places(&sheets, &mut pages.places);
+    let places = places(&sheets);
     let count = sheets.len();
-    for (at, body) in sheets.into_iter().enumerate() {
-        let mut frame = Frame::default();
-        head::set(&document.head, at + 1, count, &mut setter, &mut frame, &geometry);
-        frame.append(body, 0.0, 0.0);
-        fill_slots(&mut frame, &pages, &mut setter);
+    let bodies: Vec<Mutex<Vec<Placed>>> = sheets.into_iter().map(Mutex::new).collect();
+    let set = side_by_side(
+        count,
+        || (),
+        |(), at| {
+            let mut setter = Setter::new(fonts);
+            let mut frame = Frame::default();
+            head::set(&document.head, at + 1, count, &mut setter, &mut frame, &geometry);
+            let body = std::mem::take(&mut *bodies[at].lock().unwrap_or_else(PoisonError::into_inner));
+            body.into_iter().for_each(|part| frame.append(part.frame, 0.0, part.y));
+            fill_slots(&mut frame, &places, &mut setter);
+            (frame, setter.missing)
+        },
+    );
+    let mut pages = Pages { width: geometry.width, height: geometry.height, places, ..Pages::default() };
+    for (frame, missing) in set {
+        setter.missing.extend(missing);
         pages.sheets.push(frame);
     }
     pages.outline = outline(document, &pages);
@@ -155,18 +163,34 @@ fn introduces(blocks: &[Block], at: usize) -> bool {
         && blocks.get(at + 1).is_some_and(set_apart)
 }
 
-fn collect_places(sheets: &[Frame], places: &mut BTreeMap<Box<str>, Spot>) {
-    for (sheet, frame) in sheets.iter().enumerate() {
-        for anchor in &frame.anchors {
-            places.entry(anchor.name.clone()).or_insert(Spot { sheet, y: anchor.y });
+/// Where links lead; of two places of one name the first counts.
+fn places(sheets: &[Vec<Placed>]) -> BTreeMap<Box<str>, Spot> {
+    let mut places = BTreeMap::new();
+    for (sheet, parts) in sheets.iter().enumerate() {
+        for part in parts {
+            for anchor in &part.frame.anchors {
+                places.entry(anchor.name.clone()).or_insert(Spot { sheet, y: part.y + anchor.y });
+            }
         }
+    }
+    places
+}
+
+/// The nearest place that an address leads to: the thing itself, or what holds it (a cell's row, its table).
+fn spot(places: &BTreeMap<Box<str>, Spot>, address: &str) -> Option<Spot> {
+    let mut name = address;
+    loop {
+        if let Some(spot) = places.get(name) {
+            return Some(*spot);
+        }
+        name = &name[..name.rfind('.')?];
     }
 }
 
 /// Puts the numbers of sheets where they are read: after the words they belong to.
-fn fill_slots(frame: &mut Frame, pages: &Pages, setter: &mut Setter<'_>) {
+fn fill_slots(frame: &mut Frame, places: &BTreeMap<Box<str>, Spot>, setter: &mut Setter<'_>) {
     for slot in std::mem::take(&mut frame.slots).into_iter().rev() {
-        if let Some(spot) = pages.spot(&slot.to) {
+        if let Some(spot) = spot(places, &slot.to) {
             let number = (spot.sheet + 1).to_string();
             let kind = Type::new(FaceName::Regular, slot.size);
             let width = setter.width(&number, kind);

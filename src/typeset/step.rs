@@ -1,12 +1,14 @@
 //! A step: its number where the eye starts, its words, three lines with their equals signs in one column,
 //! addresses below, and room for the checker at the outer edge.
 use super::FaceName;
+use super::block::Column;
 use super::flow::Slab;
 use super::frame::{Anchor, Frame, Item, Path};
 use super::geometry::{BASELINE, FINE, Geometry, LEADING, SMALL, TEXT};
 use super::maths::{Filling, Line, Maths};
 use super::paragraph::{Paragraph, body_type};
 use super::text::{Setter, Type};
+use super::uses;
 use crate::formula::{Symbol, with_numbers, with_symbols};
 use crate::sheet::{Sheet, Step};
 
@@ -30,13 +32,15 @@ const NUMBER_LEAST: f32 = 0.8;
 const BELOW: f32 = 13.0;
 
 /// Sets a step as strips that may be parted only where it is taller than a sheet.
-pub(super) fn set(step: &Step, sheet: &Sheet, setter: &mut Setter<'_>, geometry: &Geometry) -> Vec<Slab> {
+pub(super) fn set(step: &Step, column: Column<'_>, setter: &mut Setter<'_>) -> Vec<Slab> {
+    let Column { sheet, geometry, .. } = column;
     let mut page = StepPage { sheet, setter, geometry, slabs: Vec::new() };
     page.title(step);
     page.formula(step);
     let by = by(step);
     let said = page.addresses(step, by.as_deref());
     page.remarks([("by", if said { None } else { by.as_deref() }), ("note", step.note.as_deref())]);
+    uses::set(column.uses.users(step.result), &mut page.slabs, page.setter, geometry);
     let last = page.slabs.len().saturating_sub(1);
     for (at, slab) in page.slabs.iter_mut().enumerate() {
         slab.keep = at < last;
@@ -207,7 +211,8 @@ impl StepPage<'_, '_> {
             let mut at_x = x + set.width + gap.width;
             at_x = self.address(&mut frame, address, fine, [at_x, left], &mut y, leading);
             x = at_x;
-            if at + 1 < step.operands.len() {
+            // At the end of a line the point falls away where there is no room for it.
+            if at + 1 < step.operands.len() && x + 3.0 + self.setter.width(" · ", fine) <= g.right {
                 x += 1.5 + self.setter.set(&mut frame, " · ", fine, x + 1.5, y) + 1.5;
             }
         }

@@ -71,7 +71,7 @@ pub fn work_member(
     chain.fixed_end(&acting);
     chain.movements(movements.middle);
     if movements.slack {
-        chain.slack();
+        chain.slack(loads);
     } else {
         chain.strains();
         chain.stresses();
@@ -103,10 +103,7 @@ impl Chain<'_> {
     /// Fixed-end actions of the whole combination: each load's own times the factor of its case.
     fn fixed_end(&mut self, loads: &[FactoredLoad<'_>]) {
         for (at, symbol) in [NF1, NF2, VF1, VF2, MF1, MF2, FM].into_iter().enumerate() {
-            let parts: Vec<_> = loads
-                .iter()
-                .filter_map(|(factor, size, load)| load.worked.fixed[at].filter(|_| *size != 0.0).map(|v| (*factor, v)))
-                .collect();
+            let parts = parts(loads, at);
             if parts.is_empty() {
                 continue;
             }
@@ -263,8 +260,19 @@ impl Chain<'_> {
         self.out.on_joint = [[part(has_x, 11, x1), part(has_y, 12, y1)], [part(has_x, 13, x2), part(has_y, 14, y2)]];
     }
 
-    /// A slack bar strains with its ends and carries nothing.
-    fn slack(&mut self) {
+    /// A slack bar strains with its ends and carries nothing: taut, it would be in compression.
+    fn slack(&mut self, loads: &[FactoredLoad<'_>]) {
+        let mut loaded = false;
+        for (at, symbol) in [NS1, NS2].into_iter().enumerate() {
+            let parts = parts(loads, at);
+            if !parts.is_empty() {
+                let number = ('L', at as u16 + 8);
+                weighted_sum(&mut self.scope, &symbol, Measure::Force, &parts, number, &source::FIXED_END);
+                loaded = true;
+            }
+        }
+        self.step('F', 7, if loaded { &bar::FORCE_IF_TAUT } else { &bar::FORCE_IF_TAUT_UNLOADED });
+        self.scope.sheet().remark(None, Some("In compression the bar is slack: it carries nothing."));
         let zero = Value::silent(0.0);
         self.out.n = [Some(zero); 2];
         self.out.axial_strain = [Some(zero); 2];
@@ -286,6 +294,14 @@ impl Chain<'_> {
             self.out.on_joint = [[part(c, 11, x1), part(s, 12, y1)], [part(c, 13, x2), part(s, 14, y2)]];
         }
     }
+}
+
+/// One of the fixed-end actions of each load that has it, with the factor of its case.
+fn parts(loads: &[FactoredLoad<'_>], at: usize) -> Vec<(Option<Value>, Value)> {
+    loads
+        .iter()
+        .filter_map(|(factor, size, load)| load.worked.fixed[at].filter(|_| *size != 0.0).map(|v| (*factor, v)))
+        .collect()
 }
 
 /// A sum of values, each times its factor, as a step of its own.

@@ -37,6 +37,17 @@ pub struct Extreme {
     pub value: Value,
     /// The fibre, of a stress.
     pub fibre: Fibre,
+    /// Axial force at the place of a stress.
+    pub axial: Option<Value>,
+    /// Moment there.
+    pub moment: Option<Value>,
+}
+
+impl Extreme {
+    /// An extreme of a force or a movement.
+    const fn plain(x: f64, value: Value) -> Self {
+        Self { x, value, fibre: Fibre::Top, axial: None, moment: None }
+    }
 }
 
 /// Extremes of a member under a combination; `None` where the kind has no such thing.
@@ -180,17 +191,17 @@ impl Seeker<'_, '_> {
 
     fn moment(&mut self) -> Extreme {
         let peak = self.field.peak(Quantity::M, f64::abs);
-        self.at_place(&peak, Quantity::M, base::MOMENT, &Symbol::new("x_M"), true)
+        self.at_place(&peak, Quantity::M, base::MOMENT, &XM, true)
     }
 
     fn shear(&mut self) -> Extreme {
         let peak = self.field.peak(Quantity::V, f64::abs);
-        self.at_place(&peak, Quantity::V, base::SHEAR, &Symbol::new("x_V"), false)
+        self.at_place(&peak, Quantity::V, base::SHEAR, &XV, false)
     }
 
     fn axial(&mut self) -> Extreme {
         let peak = self.field.peak(Quantity::N, |n| -n);
-        self.at_place(&peak, Quantity::N, base::AXIAL, &Symbol::new("x_N"), false)
+        self.at_place(&peak, Quantity::N, base::AXIAL, &XN, false)
     }
 
     fn at_place(&mut self, peak: &Peak, quantity: Quantity, nn: u16, symbol: &Symbol, zero_shear: bool) -> Extreme {
@@ -202,7 +213,7 @@ impl Seeker<'_, '_> {
         if let Some(end) = self.end(peak.x)
             && let Some(value) = own[end]
         {
-            return Extreme { x: [0.0, self.length][end], value, fibre: Fibre::Top };
+            return Extreme::plain([0.0, self.length][end], value);
         }
         let at = self.place(symbol, peak, nn, zero_shear);
         let definition = match quantity {
@@ -211,15 +222,15 @@ impl Seeker<'_, '_> {
             _ => self.between.moment(&at, &Symbol::new("M_x")),
         };
         let value = self.scope.work('X', nn + 2, &definition);
-        Extreme { x: at.x, value, fibre: Fibre::Top }
+        Extreme::plain(at.x, value)
     }
 
     fn deflection(&mut self) -> Extreme {
         let peak = self.field.peak(Quantity::Deflection, f64::abs);
         if self.end(peak.x).is_some() {
-            return Extreme { x: 0.0, value: Value::silent(0.0), fibre: Fibre::Top };
+            return Extreme::plain(0.0, Value::silent(0.0));
         }
-        let at = self.place(&Symbol::new("x_v"), &peak, base::DEFLECTION, false);
+        let at = self.place(&XDEF, &peak, base::DEFLECTION, false);
         self.deflection_place = self.scope.get(&at.symbol);
         let slope = self.field.at_slope(at.x);
         if slope {
@@ -228,7 +239,7 @@ impl Seeker<'_, '_> {
         }
         let definition = self.between.deflection(&at, &Symbol::new("v_x"));
         let value = self.scope.work('X', base::DEFLECTION + 2, &definition);
-        Extreme { x: at.x, value, fibre: Fibre::Top }
+        Extreme::plain(at.x, value)
     }
 
     /// The largest stress in the sense of `sign` over both fibres and the whole length.
@@ -251,26 +262,29 @@ impl Seeker<'_, '_> {
         let (peak, fibre) = best?;
         if let Some(end) = self.end(peak.x) {
             let value = if fibre == Fibre::Top { top[end] } else { bottom[end] }?;
-            return Some(Extreme { x: [0.0, self.length][end], value, fibre });
+            let (axial, moment) = (self.forces.n[end], self.forces.m[end]);
+            return Some(Extreme { x: [0.0, self.length][end], value, fibre, axial, moment });
         }
-        let symbol = Symbol::new(if sign > 0.0 { "x_t" } else { "x_c" });
+        let symbol = if sign > 0.0 { XT } else { XC };
         // Without axial load between the ends the stress peaks with the moment, where the shear vanishes.
         let steady = self.field.is_steady_axially();
         let at = self.place(&symbol, &peak, nn, steady);
         let mut terms = Vec::new();
+        let [mut axial, mut moment] = [None; 2];
         if self.forces.n[0].is_some() {
             let n = Symbol::new("N_x");
             if steady {
                 let value = self.scope.get(&N1)?;
                 self.scope.set(&n, value);
+                axial = Some(value);
             } else {
-                self.scope.work('X', nn + 2, &self.between.axial(&at, &n));
+                axial = Some(self.scope.work('X', nn + 2, &self.between.axial(&at, &n)));
             }
             terms.push(n / A);
         }
         if bent {
             let m = Symbol::new("M_x");
-            self.scope.work('X', nn + 3, &self.between.moment(&at, &m));
+            moment = Some(self.scope.work('X', nn + 3, &self.between.moment(&at, &m)));
             let part = m * if fibre == Fibre::Top { YT } else { YB } / I;
             terms.push(if fibre == Fibre::Top { -part } else { part });
         }
@@ -283,6 +297,6 @@ impl Seeker<'_, '_> {
         let definition = Definition::new(Symbol::new("σ_x"), title, Measure::Stress, crate::formula::Tree::sum(terms))
             .from(&source::BENDING);
         let value = self.scope.work('X', nn + 4, &definition);
-        Some(Extreme { x: at.x, value, fibre })
+        Some(Extreme { x: at.x, value, fibre, axial, moment })
     }
 }

@@ -3,6 +3,7 @@
 mod all;
 mod check;
 mod combination;
+mod depth;
 mod extreme;
 mod factor;
 mod loads;
@@ -20,6 +21,7 @@ pub use all::{
 };
 pub use check::{Check, carries_shear, work_member_checks, work_node_checks, work_stability_check};
 pub use combination::{FactoredLoad, MemberForces, Movements, work_member};
+pub use depth::{section_of_largest_stress, work_depth};
 pub use extreme::{Extreme, Extremes, Fibre, work_extremes};
 pub use factor::factor;
 pub use loads::{CaseLoad, load_inputs, work_case_loads};

@@ -58,6 +58,8 @@ fn main() {
             )));
         });
         let process = median(|| {
+            // What a file holds already is not written again: every run begins with an empty folder.
+            drop(fs::remove_dir_all(&out));
             let status = Command::new(env!("CARGO_BIN_EXE_calcsheaf"))
                 .arg("pack")
                 .arg(&path)

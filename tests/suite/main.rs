@@ -2,6 +2,7 @@
 mod commands;
 mod damage;
 mod diagnostics;
+mod figures;
 #[path = "../fuzz/mod.rs"]
 mod fuzz;
 mod hostile;
@@ -9,6 +10,7 @@ mod independent;
 mod laws;
 mod markdown;
 mod packages;
+mod pages;
 mod promises;
 mod published;
 mod readme;

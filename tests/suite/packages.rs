@@ -4,6 +4,7 @@ use calcsheaf::package::{self, Package};
 use std::collections::BTreeMap;
 use std::fs;
 use std::path::{Path, PathBuf};
+use std::sync::LazyLock;
 
 pub(crate) fn demos() -> Vec<PathBuf> {
     let folder = Path::new(env!("CARGO_MANIFEST_DIR")).join("demo-inputs");
@@ -30,6 +31,16 @@ pub(crate) fn pack_file(path: &Path) -> (String, Package) {
     let name = path.file_name().expect("name").to_string_lossy().into_owned();
     let package = pack(&text, &name);
     (text, package)
+}
+
+/// The packages of all demos and of the stored random structures.
+pub(crate) fn many() -> &'static [(String, Package)] {
+    static MANY: LazyLock<Vec<(String, Package)>> = LazyLock::new(|| {
+        let files = demos().into_iter().chain(crate::published::cases("independent"));
+        files.map(|path| pack_file(&path).1).map(|package| (package.stem.clone(), package)).collect()
+    });
+    assert!(MANY.len() > 40, "random structures are missing");
+    &MANY
 }
 
 /// Step number to the whole text of its block.

@@ -18,7 +18,8 @@ fn unconfirmed(name: &str, markdown: &str, input: &str) -> Vec<String> {
             + report.findings.iter().filter_map(|f| f.step.as_ref()).collect::<std::collections::BTreeSet<_>>().len(),
         "{name}"
     );
-    report.findings.iter().map(|finding| format!("{name}: {finding}")).collect()
+    let orphans = report.coverage.orphans.iter().map(|step| format!("{name}: nothing draws on {step}"));
+    report.findings.iter().map(|finding| format!("{name}: {finding}")).chain(orphans).collect()
 }
 
 #[test]

@@ -4,6 +4,7 @@ use std::path::{Path, PathBuf};
 
 /// Rooms and the rooms they may use.
 const IMPORTS: &[(&str, &[&str])] = &[
+    ("cores", &[]),
     ("units", &[]),
     ("diagnostic", &[]),
     ("formula", &["units"]),
@@ -14,9 +15,9 @@ const IMPORTS: &[(&str, &[&str])] = &[
     ("work", &["analysis", "catalogue", "formula", "model", "units"]),
     ("sheet", &["analysis", "catalogue", "figure", "formula", "model", "units", "work"]),
     ("figure", &["catalogue", "model", "units"]),
-    ("document", &["units"]),
-    ("typeset", &["document", "figure", "formula", "model", "sheet", "units"]),
-    ("write", &["analysis", "document", "figure", "formula", "model", "sheet", "typeset", "units", "work"]),
+    ("document", &["cores", "units"]),
+    ("typeset", &["cores", "document", "figure", "formula", "model", "sheet", "units"]),
+    ("write", &["analysis", "cores", "document", "figure", "formula", "model", "sheet", "typeset", "units", "work"]),
     ("retrace", &["diagnostic", "formula", "units"]),
     (
         "package",

@@ -14,4 +14,6 @@ definitions! {
     STRESS_END: ST2, Stress, E * E2, &source::HOOKE;
     FORCE_START: N1, Force, BA * E1, &source::HOOKE;
     FORCE_END: N2, Force, BA * E2, &source::HOOKE;
+    FORCE_IF_TAUT: NS, Force, BA * U / L + (NS1 + NS2) / 2, &source::HOOKE;
+    FORCE_IF_TAUT_UNLOADED: NS, Force, BA * U / L, &source::HOOKE;
 }

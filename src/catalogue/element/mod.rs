@@ -2,6 +2,7 @@
 pub mod bar;
 pub mod bar3;
 pub mod bending;
+pub mod depth;
 pub mod geometry;
 pub mod joint;
 pub mod movement;
@@ -30,5 +31,8 @@ pub(crate) use definitions;
 
 /// Every definition of every member kind.
 pub fn all() -> impl Iterator<Item = &'static Definition> {
-    [bar::ALL, bar3::ALL, bending::ALL, geometry::ALL, joint::ALL, movement::ALL].into_iter().flatten().map(|d| &***d)
+    [bar::ALL, bar3::ALL, bending::ALL, depth::ALL, geometry::ALL, joint::ALL, movement::ALL]
+        .into_iter()
+        .flatten()
+        .map(|d| &***d)
 }

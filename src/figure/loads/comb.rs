@@ -74,7 +74,7 @@ pub(super) fn draw(canvas: &mut Canvas, view: &View<'_>, stack: &mut Stack, at: 
         }
         let anchor = along(view.on(member, (part[0] + part[1]) / 2.0, 0.0), normal, base);
         let said = if even { words(*start) } else { format!("{} to {}", words(*start), words(*end)) };
-        canvas.label(Wish { anchors: vec![anchor], toward: Some(normal), gap: 1.2 }, Style::Regular, said);
+        canvas.label(Wish { anchors: vec![anchor], toward: Some(normal), gap: 1.2, far: false }, Style::Regular, said);
         return;
     }
     let back = pointing.map(|v| -v);
@@ -111,11 +111,15 @@ pub(super) fn draw(canvas: &mut Canvas, view: &View<'_>, stack: &mut Stack, at: 
     let between = |t: f64| -> [f64; 2] { std::array::from_fn(|i| tops[0][i] + t * (tops[1][i] - tops[0][i])) };
     if even {
         let anchors = vec![middle, between(0.3), between(0.7)];
-        canvas.label(Wish { anchors, toward: Some(back), gap: 0.6 }, Style::Regular, words(*start));
+        canvas.label(Wish { anchors, toward: Some(back), gap: 0.6, far: false }, Style::Regular, words(*start));
     } else {
         for (top, w) in tops.iter().zip([*start, *end]) {
             if w != 0.0 {
-                canvas.label(Wish { anchors: vec![*top], toward: Some(back), gap: 0.6 }, Style::Regular, words(w));
+                canvas.label(
+                    Wish { anchors: vec![*top], toward: Some(back), gap: 0.6, far: false },
+                    Style::Regular,
+                    words(w),
+                );
             }
         }
     }

@@ -1,6 +1,6 @@
 //! Orders of magnitude from simple spans.
 use crate::catalogue::load::Local;
-use crate::catalogue::symbol::{L, MF1, MF2};
+use crate::catalogue::symbol::{L, MF1, MF2, MMAX};
 use crate::formula::{Definition, Scope, Symbol, Tree, Value, Worksheet, source};
 use crate::model::{Combination, Member};
 use crate::units::Measure;
@@ -69,7 +69,7 @@ pub fn work_bound(
         61,
         &Definition::new(bound.clone(), title, Measure::Moment, Tree::sum(terms)).from(&source::STATICS),
     );
-    let largest = Symbol::new("M_max");
+    let largest = MMAX;
     scope.set(&largest, peak.value);
     let title = "Largest moment over that order of magnitude";
     let ratio = scope.work(
@@ -89,7 +89,7 @@ pub fn work_bound(
     if scope.get(&MF1).is_some_and(|m| m.si != 0.0) && scope.get(&MF2).is_some() {
         let fixed = Tree::Max(vec![MF1.tree().absolute(), MF2.tree().absolute()]);
         let title = "Largest moment over the larger fixed-end moment of the loads, w·L²/12 where one uniform load acts";
-        let tree = Symbol::new("M_max").tree().absolute() / fixed;
+        let tree = MMAX.tree().absolute() / fixed;
         scope.work(
             'X',
             63,

@@ -2,6 +2,7 @@
 use crate::analysis::CombinationSolution;
 use crate::catalogue::between::{Field, Quantity};
 use crate::catalogue::load::Local;
+use crate::catalogue::symbol::{EEXT, EFREE, ESTR};
 use crate::formula::{Definition, Scope, Symbol, Value, Worksheet, source};
 use crate::model::{Action, Combination, Member, Model};
 use crate::units::Measure;
@@ -178,7 +179,7 @@ pub fn work_energy(sheet: &mut dyn Worksheet, combination: &str, energy: &Energy
     let mut state =
         |row: &str, si: f64| sheet.stated(format_args!("{combination}.W.{row}.E"), si, size, Measure::Energy);
     let stated = [state("external", energy.external), state("strain", energy.strain), state("free", energy.free)];
-    let [external, strain, free] = ["E_e", "E_s", "E_f"].map(Symbol::new);
+    let [external, strain, free] = [EEXT, ESTR, EFREE];
     let tree = external.clone() - strain.tree() - free.tree();
     let definition = Definition::new(
         Symbol::new("B_E"),

@@ -1,6 +1,6 @@
 //! Deflections again by a unit load on a simple span.
 use crate::catalogue::load::Local;
-use crate::catalogue::symbol::{BB, BV, L, M1, M2};
+use crate::catalogue::symbol::{BB, BV, L, M1, M2, XDEF};
 use crate::formula::{Definition, Scope, Symbol, Tree, Value, Worksheet, source};
 use crate::model::{Combination, Member};
 use crate::units::Measure;
@@ -29,7 +29,7 @@ pub fn work_unit_load(
         // The simple-span formulas know no shear deformation.
         return;
     }
-    let x = Symbol::new("x_v");
+    let x = XDEF;
     let Some(place) = extremes.deflection_place else { return };
     scope.set(&x, place);
     let x = || x.tree();

@@ -2,6 +2,7 @@
 use super::energy::{dot, free_strains, integral};
 use crate::analysis::CombinationSolution;
 use crate::catalogue::between::Quantity;
+use crate::catalogue::symbol::UNODE;
 use crate::formula::{Definition, Scope, Symbol, Tree, Value, Worksheet, source};
 use crate::model::{Combination, Model};
 use crate::units::Measure;
@@ -116,7 +117,7 @@ pub fn work_virtual(
         91 + direction as u16,
         &Definition::new(symbol.clone(), title, measure, Tree::sum(terms)).from(&source::UNIT_LOAD),
     );
-    let first = Symbol::new("u");
+    let first = UNODE;
     scope.set(&first, moved);
     let title = format!("Difference of the two movements in {word}");
     let difference =

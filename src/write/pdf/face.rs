@@ -1,5 +1,6 @@
 //! Faces reduced to the glyphs in use, numbered anew.
 use super::{Faces, PdfFault};
+use crate::cores::side_by_side;
 use crate::typeset::{Face, FaceName, Fonts, Item, Pages};
 use printpdf::{Codepoint, FontId, Op, ParsedFont, PdfFont, PdfFontHandle, Pt, TextItem};
 use subsetter::{GlyphRemapper, subset};
@@ -63,10 +64,17 @@ pub(super) fn in_use(pages: &Pages, fonts: &Fonts) -> Result<Faces, PdfFault> {
         }
     }
     let mut faces: Faces = Default::default();
-    for (name, marks) in FaceName::ALL.into_iter().zip(&used) {
-        if !marks.is_empty() {
-            faces[name as usize] = Some(embed(name as usize, fonts.face(name), marks)?);
-        }
+    let names = FaceName::ALL;
+    let embedded = side_by_side(
+        names.len(),
+        || (),
+        |(), at| {
+            let marks = &used[names[at] as usize];
+            (!marks.is_empty()).then(|| embed(names[at] as usize, fonts.face(names[at]), marks)).transpose()
+        },
+    );
+    for (name, face) in names.into_iter().zip(embedded) {
+        faces[name as usize] = face?;
     }
     Ok(faces)
 }

@@ -1,7 +1,7 @@
 //! The file around the pages: objects gathered into packed streams, a cross-reference stream at the end.
 //!
 //! ISO 32000-1, 7.5.7 (object streams) and 7.5.8 (cross-reference streams).
-use crate::typeset::cores::side_by_side;
+use crate::cores::side_by_side;
 use flate2::{Compress, Compression, FlushCompress, Status};
 use std::ops::Range;
 

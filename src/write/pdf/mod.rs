@@ -8,8 +8,8 @@ mod ink;
 mod outline;
 mod page;
 
+use crate::cores::side_by_side;
 use crate::document::RunningHead;
-use crate::typeset::cores::side_by_side;
 use crate::typeset::{Fonts, Pages};
 use face::EmbeddedFace;
 use file::{File, Number, Packer};
