@@ -8,6 +8,11 @@ use sha2::{Digest, Sha256};
 /// Letters and digits of a SHA-256 in hexadecimal.
 const HEX_LENGTH: usize = 64;
 
+/// How the row of a table begins that prints the fingerprint.
+const ROW: &str = "fingerprint of the input";
+/// How the line above the input begins.
+const LINE: &[&str] = &["sha-256:", "sha256:"];
+
 /// A fingerprint as printed.
 #[derive(Debug, Clone, PartialEq, Eq)]
 pub(super) struct Fingerprint {
@@ -16,10 +21,15 @@ pub(super) struct Fingerprint {
 }
 
 impl Fingerprint {
-    /// The fingerprint in a line that speaks of SHA-256; a finding where a long word stands there that is none.
+    /// The fingerprint in a row named so, or in a line that begins with its kind; a finding where a long word stands
+    /// there that is none. Other lines may speak of fingerprints, of an earlier revision for instance.
     pub(super) fn read(line: Line<'_>) -> Option<Result<Self, Finding>> {
         let text = line.text.to_ascii_lowercase();
-        if !text.contains("sha-256") && !text.contains("sha256") {
+        let is_named = match text.strip_prefix('|') {
+            Some(row) => row.trim_start().starts_with(ROW),
+            None => LINE.iter().any(|beginning| text.starts_with(beginning)),
+        };
+        if !is_named {
             return None;
         }
         let word = text.split(|c: char| !c.is_alphanumeric()).find(|word| word.len() > HEX_LENGTH / 2)?;

@@ -11,6 +11,9 @@ use std::collections::{BTreeMap, BTreeSet};
 /// Heading of the column that says what a listed step is.
 const WHAT: &str = "what it is";
 
+/// Heading of the column that lists steps by their subject.
+const LISTED: &str = "steps to confirm";
+
 /// Compares the steps with what is said of them.
 pub(super) fn check(package: &Package, findings: &mut Vec<Finding>) {
     let steps: BTreeMap<&str, &PrintedStep> = package.steps.iter().map(|step| (step.number.as_str(), step)).collect();
@@ -39,8 +42,26 @@ pub(super) fn check(package: &Package, findings: &mut Vec<Finding>) {
             }
         }
     }
+    for table in &package.tables {
+        check_subjects(&steps, table, findings);
+    }
     for table in package.tables.iter().filter(|table| table.head.to_lowercase().ends_with("package holds")) {
         check_counts(package, table, findings);
+    }
+}
+
+/// Steps listed by subject: every number with its subject is a step.
+fn check_subjects(steps: &BTreeMap<&str, &PrintedStep>, table: &PrintedTable, findings: &mut Vec<Finding>) {
+    let Some(column) = table.columns.iter().position(|(symbol, _)| symbol.to_lowercase() == LISTED) else { return };
+    for row in &table.rows {
+        let cell = row.cells.get(column).map_or("", String::as_str);
+        for entry in cell.split(" · ") {
+            let number = entry.strip_prefix('[').and_then(|entry| entry.split(']').next()).unwrap_or(entry);
+            if !steps.contains_key(format!("{}.{number}", row.name).as_str()) {
+                let expected = format!("steps of {} that stand in the package", row.name);
+                findings.push(Finding::at(row.line, expected, format!("`{number}`")));
+            }
+        }
     }
 }
 

@@ -15,9 +15,11 @@ pub struct Package {
     pub(super) unread_steps: usize,
     pub(super) tables: Vec<PrintedTable>,
     pub(super) fingerprints: Vec<Fingerprint>,
+    /// The fingerprint in a line of text, the last one.
+    above_input: Option<Result<Fingerprint, Finding>>,
     pub(super) echo: Option<Echo>,
-    /// Lines that begin with `Governing:`, as words.
-    pub(super) governing: Vec<(usize, String)>,
+    /// The first line that begins with `Governing:`, as words.
+    pub(super) governing: Option<(usize, String)>,
     pub(super) faults: Vec<Finding>,
     pub(super) remarks: Vec<String>,
     pub(super) loose_numbers: usize,
@@ -84,8 +86,9 @@ pub fn read(markdown: &str) -> Result<Package, Refusal> {
         unread_steps: 0,
         tables: Vec::new(),
         fingerprints: Vec::new(),
+        above_input: None,
         echo: None,
-        governing: Vec::new(),
+        governing: None,
         faults: Vec::new(),
         remarks: Vec::new(),
         loose_numbers: 0,
@@ -100,6 +103,7 @@ pub fn read(markdown: &str) -> Result<Package, Refusal> {
         package.remarks.push("the last line does not end: the file may have been cut short".into());
     }
     let mut verbatim: Vec<(usize, Vec<Line<'_>>)> = Vec::new();
+    let mut before = "";
     for shape in shapes(text) {
         match shape {
             Shape::Fence { line, is_closed: false, .. } => {
@@ -123,13 +127,21 @@ pub fn read(markdown: &str) -> Result<Package, Refusal> {
                 }
                 package.tables.push(PrintedTable::read(before, head, &rows));
             }
-            Shape::Text(line) => package.text(line),
+            Shape::Text(line) => {
+                package.text(line, before);
+                before = line.text;
+            }
         }
     }
     if package.steps.is_empty() && package.unread_steps == 0 {
         return refuse(None, "there is no step in this text: it is no calculation package, or was cut short");
     }
-    let Some(last) = package.fingerprints.last().map(|fingerprint| fingerprint.line) else {
+    match package.above_input.take() {
+        Some(Ok(fingerprint)) => package.fingerprints.push(fingerprint),
+        Some(Err(finding)) => package.faults.push(finding),
+        None => {}
+    }
+    let Some(last) = package.fingerprints.iter().map(|fingerprint| fingerprint.line).max() else {
         return refuse(
             None,
             "there is no SHA-256 of the input: the package was cut short, or its fingerprint is damaged",
@@ -142,34 +154,43 @@ pub fn read(markdown: &str) -> Result<Package, Refusal> {
     let (line, lines) = verbatim.remove(at);
     package.echo = Some(Echo::new(line, &lines));
     for (_, lines) in verbatim {
+        let mut before = "";
         for line in lines {
-            package.must_not_be_step(line);
+            package.must_not_be_step(line, before);
+            before = line.text;
         }
     }
     Ok(package)
 }
 
 impl Package {
-    fn text(&mut self, line: Line<'_>) {
-        self.must_not_be_step(line);
-        self.fingerprint_in(line);
+    fn text(&mut self, line: Line<'_>, before: &str) {
+        self.must_not_be_step(line, before);
+        // The line above the input is the last of its kind; prose before it may begin alike.
+        if let Some(found) = Fingerprint::read(line) {
+            self.above_input = Some(found);
+        }
         let text = words(line.text);
         self.loose_numbers += text
             .split_whitespace()
             .map(|token| token.trim_matches(|c: char| !c.is_alphanumeric() && c != '−'))
             .filter(|token| parse_printed(token).is_ok())
             .count();
-        if text.starts_with("Governing:") {
-            self.governing.push((line.number, text));
+        // The verdict stands on the cover; prose behind it may begin with the same word.
+        if text.starts_with("Governing:") && self.governing.is_none() {
+            self.governing = Some((line.number, text));
         }
     }
 
     /// A step that its fence does not hold would look confirmed and be none.
-    fn must_not_be_step(&mut self, line: Line<'_>) {
+    ///
+    /// Addresses follow a result, or the end of a long line of one; a line of prose may begin with the same word.
+    fn must_not_be_step(&mut self, line: Line<'_>, before: &str) {
         let text = line.text.trim_start_matches(['>', ' ', '\t']);
         let bare = text.trim_start_matches(['`', '~']);
         let opens_step = bare.len() < text.len() && bare.trim_start().starts_with("step ");
-        if opens_step || text.starts_with("from: ") {
+        let follows_result = before.trim_start().starts_with(['=', '(']);
+        if opens_step || text.starts_with("from: ") && follows_result {
             self.faults.push(Finding::at(line.number, "steps inside fences of their own", format!("`{text}`")));
         }
     }

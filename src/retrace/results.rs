@@ -15,9 +15,6 @@ const DUST: f64 = 1e-6;
 /// Rows of the audit of loads and the first number of their steps, which run through x, y and moment.
 const AUDIT: &[(&str, usize)] = &[("asked", 1), ("returned", 11), ("left over", 21)];
 
-/// Steps of parts of a stress, which the largest stress is not one of.
-const PARTS: [&str; 3] = [".S21", ".S22", ".S23"];
-
 /// Compares the tables `<combination>.R`, `.A` and `.Q`.
 pub(super) fn check(package: &Package, confirmed: &mut BTreeSet<Cell>, findings: &mut Vec<Finding>) {
     let mut steps: BTreeMap<&str, Vec<&PrintedStep>> = BTreeMap::new();
@@ -60,15 +57,14 @@ fn audited<'p>(steps: &[&'p PrintedStep], row: &str, column: &str) -> Option<&'p
     steps.iter().copied().find(|step| step.number.ends_with(&last))
 }
 
-/// The step with the algebraically largest, or smallest, stress along a member that is worked.
+/// The step of a whole stress, at an end or between, with the algebraically largest, or smallest, stress along a member that is worked.
 fn largest<'p>(steps: &[&'p PrintedStep], table: &PrintedTable, row: usize, column: &str) -> Option<&'p PrintedStep> {
     let worked = table.columns.iter().position(|(symbol, _)| symbol == "worked")?;
     table.rows[row].cells.get(worked).filter(|word| *word == "yes")?;
     let stresses = steps.iter().copied().filter(|step| {
         step.result.unit.dimension == Dimension::STRESS
             && step.symbol.as_str().starts_with('σ')
-            && step.letter().is_some_and(|letter| "SX".contains(letter))
-            && !PARTS.iter().any(|part| step.number.ends_with(part))
+            && step.number.rsplit('.').next().is_some_and(|last| last.starts_with("S0") || last.starts_with('X'))
     });
     let by_size = |a: &&PrintedStep, b: &&PrintedStep| a.result.si().total_cmp(&b.result.si());
     match column {

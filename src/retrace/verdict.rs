@@ -59,7 +59,7 @@ pub(super) fn check(
     remarks: &mut Vec<String>,
     coverage: &mut Coverage,
 ) {
-    if package.governing.is_empty() && package.steps.iter().any(|step| step.comparison.is_some()) {
+    if package.governing.is_none() && package.steps.iter().any(|step| step.comparison.is_some()) {
         remarks.push("no line begins with `Governing:`, so the verdict was not compared with the steps".into());
     }
     let summary = package.tables.iter().filter(|table| verdict_column(table).is_some()).max_by_key(|t| t.rows.len());
@@ -85,7 +85,7 @@ fn check_governing(package: &Package, findings: &mut Vec<Finding>, coverage: &mu
             && !parts.contains(step.number.as_str())
     });
     let largest = utilisations.max_by(|a, b| a.result.si().total_cmp(&b.result.si()));
-    for (line, text) in &package.governing {
+    if let Some((line, text)) = &package.governing {
         let tokens = || text.split_whitespace().map(|t| t.trim_matches(|c: char| !c.is_alphanumeric() && c != '−'));
         let numbers: Vec<PrintedNumber> = tokens().filter_map(|token| parse_printed(token).ok()).collect();
         let named = tokens().find_map(|token| compared.get(token).copied());
@@ -99,7 +99,7 @@ fn check_governing(package: &Package, findings: &mut Vec<Finding>, coverage: &mu
                 let found = numbers.last().map_or("no number".into(), |number| format!("`{number}`"));
                 findings.push(Finding::at(*line, expected, found));
             }
-            continue;
+            return;
         };
         if !numbers.iter().any(|number| number.prints_as(&step.result)) {
             let found = numbers.last().map_or("no number".into(), |number| format!("`{number}`"));

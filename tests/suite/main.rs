@@ -5,6 +5,7 @@ mod diagnostics;
 mod figures;
 #[path = "../fuzz/mod.rs"]
 mod fuzz;
+mod hostile;
 mod independent;
 mod laws;
 mod markdown;
