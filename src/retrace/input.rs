@@ -26,9 +26,8 @@ pub(super) fn check(
     let Some(input) = input.filter(|input| input.faults().is_empty()) else { return };
     for (table_at, table) in package.tables.iter().enumerate() {
         let Some(id) = table.id.as_deref() else { continue };
-        if let Some((_, block)) = WHOLE_BLOCKS.iter().find(|(known, _)| *known == id)
-            && let Some(entries) = entries(input, block)
-        {
+        let block = WHOLE_BLOCKS.iter().find(|(known, _)| *known == id);
+        if let Some(entries) = block.and_then(|(_, block)| entries(input, block)) {
             check_rows(table, entries, findings);
         }
         for (row_at, row) in table.rows.iter().enumerate() {

@@ -20,6 +20,8 @@ const WORDS: &[&str] = &[
     "Difference",
     "Agreed",
     "Initials",
+    // A list of where to look, not of numbers: a step that is not there is missed by whoever looks for it.
+    "Steps to confirm",
     "source",
     "for",
     "title",
