@@ -183,8 +183,10 @@ impl Bench<'_, '_> {
             missing.push("tensile or compressive");
         }
         if !missing.is_empty() {
-            row.ratio = None;
-            row.why = Some(format!("no allowable {} stress is given", missing.join(" or ")));
+            // What is known to be beyond its limit is said, whatever else could not be compared.
+            row.partial = row.ratio.is_some();
+            let alone = if row.partial { "; limit and ratio are those of the other stress alone" } else { "" };
+            row.why = Some(format!("no allowable {} stress is given{alone}", missing.join(" or ")));
         }
         self.rows.push(row);
     }
@@ -205,11 +207,16 @@ impl Bench<'_, '_> {
         } else {
             None
         };
-        row.demand = tau.map(|t| t.si);
+        // Without any shear force there is no shear stress, whatever the section.
+        row.demand = tau.map(|t| t.si).or((!written).then_some(0.0));
         row.place = Some(peak.x);
         row.limit = member.allowable.shear;
         row.why = match (tau, member.allowable.shear) {
             (_, None) => Some("no allowable shear stress is given".into()),
+            (None, Some(_)) if !written => {
+                row.ratio = Some(0.0);
+                None
+            }
             (None, _) => Some("the section has no shear area".into()),
             (Some(_), Some(limit)) => {
                 self.limit(&check::SHEAR_LIMIT, &allowable_address(&member.allowable_path[2]), limit, Measure::Stress);
@@ -331,7 +338,11 @@ impl Bench<'_, '_> {
             row.ratio = Some(self.compare(43, &slenderness::UTILISATION_IN));
             row.step = self.number(43);
             row.partial = true;
-            row.why = Some("NOT CHECKED out of the plane, for which no effective length is given; demand and ratio are those in the plane alone".into());
+            row.why = Some(if has(&self.scope, &check::L_OUT) {
+                "NOT CHECKED out of the plane, for which the section has no second moment of area; demand and ratio are those in the plane alone".into()
+            } else {
+                "NOT CHECKED out of the plane, for which no effective length is given; demand and ratio are those in the plane alone".into()
+            });
         }
         self.rows.push(row);
     }

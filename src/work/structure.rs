@@ -143,7 +143,8 @@ fn axial_force(field: &Field) -> Vec<(f64, f64)> {
         let chords = if straight { 1 } else { CHORDS };
         for at in 0..chords {
             let from = pair[0] + length * at as f64 / chords as f64;
-            let to = pair[0] + length * (at + 1) as f64 / chords as f64;
+            // The last chord ends where the next part begins, to the last bit.
+            let to = if at + 1 == chords { pair[1] } else { pair[0] + length * (at + 1) as f64 / chords as f64 };
             // A parabola lies above its chord by two thirds of its bulge on the mean.
             let raise = if straight { 0.0 } else { 2.0 / 3.0 * bulge(from, to) };
             points.push((from, value(from, true) + raise));

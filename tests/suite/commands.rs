@@ -100,3 +100,39 @@ fn a_file_that_is_not_there_and_a_folder_that_cannot_be_written() {
     let result = run(&["pack", &demo("hanger-rod.yaml"), "--out", &file.join("below").to_string_lossy()]);
     assert_eq!(result.status.code(), Some(1), "{}", String::from_utf8_lossy(&result.stderr));
 }
+
+/// A stress known to be beyond its limit is said, though the other limit is missing: simple span of 6 m, 50 kN at
+/// mid-span, 50 × 100 mm: M = 75 kN·m, σ = 6·M/(b·d²) = 900 MPa (statics), over 165 MPa allowed in tension.
+#[test]
+fn a_known_overstress_is_said_though_another_limit_is_missing() {
+    let input = "calcsheaf: 1\nproject: {title: T}\nmaterials: {S: {E: 210 GPa, allowable: {tension: 165 MPa}}}\n\
+        sections: {P: {shape: rectangle, depth: 100 mm, width: 50 mm}}\n\
+        nodes: {A: {x: 0 m, y: 0 m}, B: {x: 6 m, y: 0 m}}\nsupports: {A: pinned, B: {hold: [y]}}\n\
+        members: {AB: {kind: frame, from: A, to: B, section: P, material: S}}\n\
+        load_cases: {L: {loads: [{on: AB, dir: Y, p: -50 kN, at: 50 %}]}}\n";
+    let solved = calcsheaf::package::solve(input).unwrap_or_else(|refusal| panic!("{}", refusal.faults.len()));
+    let check = solved.results.combinations[0].checks.iter().find(|c| c.kind == "stress").expect("a row");
+    assert_eq!(check.ok(), Some(false));
+    assert!((check.ratio.expect("a ratio") - 900.0 / 165.0).abs() < 1e-9);
+    assert!(check.why.as_deref().is_some_and(|why| why.contains("compressive")));
+    let package = crate::packages::pack(input, "t.yaml");
+    assert_eq!(package.beyond, 1);
+    let report =
+        calcsheaf::retrace::confirm(&calcsheaf::retrace::read(&package.markdown).expect("a package"), Some(input));
+    assert!(report.ok(), "{report}");
+}
+
+/// Places of loads whose difference is not exact in binary.
+#[test]
+fn loads_at_awkward_places_are_taken() {
+    for (a, b) in [("0.3", "0.9"), ("0.6", "1.7"), ("0.7", "2.9"), ("1.4", "5.8"), ("1.7", "3.9")] {
+        let input = format!(
+            "calcsheaf: 1\nproject: {{title: T}}\nmaterials: {{S: {{E: 210 GPa}}}}\n\
+             sections: {{P: {{shape: rectangle, depth: 100 mm, width: 50 mm}}}}\n\
+             nodes: {{A: {{x: 0 m, y: 0 m}}, B: {{x: 6 m, y: 0 m}}}}\nsupports: {{A: pinned, B: {{hold: [y]}}}}\n\
+             members: {{AB: {{kind: frame, from: A, to: B, section: P, material: S}}}}\n\
+             load_cases: {{L: {{loads: [{{on: AB, dir: Y, p: -10 kN, at: {a} m}}, {{on: AB, dir: Y, p: -10 kN, at: {b} m}}]}}}}\n"
+        );
+        assert!(calcsheaf::package::solve(&input).is_ok(), "{a} {b}");
+    }
+}

@@ -9,8 +9,8 @@ use crate::work::{Extremes, FactoredLoad, MemberForces};
 
 /// Moment of a member against the sum of what each load would give on a simple span (steps X61, X62).
 ///
-/// Where every load spans the member or is a point force the sum is of w·L²/8 and P·a·b/L; any other load counts as
-/// if it stood at mid-span, W·L/4. The sum is an upper bound of the simple-span moment.
+/// Where every load spans the member, is a point force or a couple the sum is of w·L²/8, P·a·b/L and m·max(a, b)/L;
+/// any other load counts as if it stood at mid-span, W·L/4. The sum is an upper bound of the simple-span moment.
 pub fn work_bound(
     sheet: &mut dyn Worksheet,
     member: &Member,
@@ -50,6 +50,10 @@ pub fn work_bound(
             Local::Point { a, across: Some(p), .. } => {
                 let (p, a) = (known("P", p), known("a", a));
                 Some(p.tree().absolute() * a.clone() * (L - a.tree()) / L)
+            }
+            Local::Couple { a, m } => {
+                let (m, a) = (known("m", m), known("a", a));
+                Some(m.tree().absolute() * Tree::Max(vec![a.tree(), L - a.tree()]) / L)
             }
             _ => None,
         };
