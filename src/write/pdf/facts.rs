@@ -44,15 +44,13 @@ pub(super) fn information(facts: &Facts) -> Vec<u8> {
     ink.0
 }
 
-/// The same facts as XMP (ISO 16684-1), with the part and level of PDF/A that the file is written to.
+/// The same facts as XMP (ISO 16684-1). No conformance to PDF/A is claimed: nothing here has checked it.
 pub(super) fn metadata(facts: &Facts) -> String {
     let mut text = String::from(concat!(
         "<?xpacket begin=\"\u{feff}\" id=\"W5M0MpCehiHzreSzNTczkc9d\"?>\n",
         "<x:xmpmeta xmlns:x=\"adobe:ns:meta/\"><rdf:RDF xmlns:rdf=\"http://www.w3.org/1999/02/22-rdf-syntax-ns#\">\n",
         "<rdf:Description rdf:about=\"\" xmlns:dc=\"http://purl.org/dc/elements/1.1/\" ",
-        "xmlns:xmp=\"http://ns.adobe.com/xap/1.0/\" xmlns:pdf=\"http://ns.adobe.com/pdf/1.3/\" ",
-        "xmlns:pdfaid=\"http://www.aiim.org/pdfa/ns/id/\">\n",
-        "<pdfaid:part>2</pdfaid:part><pdfaid:conformance>U</pdfaid:conformance>\n",
+        "xmlns:xmp=\"http://ns.adobe.com/xap/1.0/\" xmlns:pdf=\"http://ns.adobe.com/pdf/1.3/\">\n",
         "<dc:format>application/pdf</dc:format><dc:language><rdf:Bag><rdf:li>en</rdf:li></rdf:Bag></dc:language>\n",
     ));
     let listed = [
